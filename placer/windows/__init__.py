@@ -1,0 +1,1 @@
+"""Dates to instants: recurrences, local clocks, windows with the freezes cut out."""
