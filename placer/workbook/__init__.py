@@ -1,0 +1,1 @@
+"""The edge to files: reads the inventory, writes the plan.  Only here is openpyxl."""

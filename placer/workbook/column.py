@@ -1,0 +1,137 @@
+"""What can be said of one column of the inventory, before any file is read."""
+
+import re
+import unicodedata
+from dataclasses import dataclass
+from enum import Enum, IntEnum
+
+from placer.units import Side
+
+
+class Kind(Enum):
+    """How the cells of a column are read."""
+
+    ID = "name"
+    TEXT = "text"
+    LIST = "names, separated by ; or ,"
+    NUMBER = "number"
+    COUNT = "whole number"
+    PERCENT = "percent"
+    RATIO = "number, or as in 2:1"
+    SWITCH = "yes or no"
+    WORD = "one of the words"
+    DAY = "day of the week or date"
+    DATE = "date"
+    CLOCK = "time of day"
+    ZONE = "time zone"
+    ANY = "as the setting asks"
+
+
+class Effect(IntEnum):
+    """What a wrong default could do to the plan, the gravest first."""
+
+    NIGHTS = 1
+    ROOM = 2
+    BUSY = 3
+    RESPONSE = 4
+    COPYING = 5
+    WEAR = 6
+    GROWTH = 7
+    GOALS = 8
+    NONE = 9
+
+    @property
+    def sentence(self) -> str:
+        """Return the effect in words; blank where there is none to speak of."""
+        return _SENTENCES[self]
+
+
+_SENTENCES = {
+    Effect.NIGHTS: "decides on which nights anything can move",
+    Effect.ROOM: "decides how much fits into a pool",
+    Effect.BUSY: "decides how much load a pool or an array carries",
+    Effect.RESPONSE: "decides which volumes gain from a move",
+    Effect.COPYING: "decides how fast copies run and how many nights they take",
+    Effect.WEAR: "decides how many writes flash drives may take",
+    Effect.GROWTH: "decides how full and how busy pools become later",
+    Effect.GOALS: "decides which of several valid plans is called best",
+    Effect.NONE: "",
+}
+
+NOT_LIMITED = "not limited"
+GB_MEANS = "GB in this export means"
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Column:
+    """One column (or one setting of the policy).
+
+    Attributes
+    ----------
+    unit
+        The unit in which it is typed; blank where it has none.
+    default
+        What an empty cell means, as the user would type it.
+    by_media
+        Defaults that hold for one medium only: pairs of medium and default.
+    derived
+        Whether ``default`` is a sentence: the reader computes it from other cells.
+    lowest, highest
+        Bounds of what can be meant, in the unit typed.
+    side
+        Which way the number is rounded when it becomes a whole number.
+    effect
+        What a wrong default could do; the assumptions are listed in this order.
+    """
+
+    name: str
+    kind: Kind
+    meaning: str
+    unit: str = ""
+    default: str = ""
+    by_media: tuple[tuple[str, str], ...] = ()
+    derived: bool = False
+    required: bool = False
+    lowest: int = 0
+    highest: int = 10**9
+    side: Side = Side.NEUTRAL
+    words: tuple[str, ...] = ()
+    synonyms: tuple[str, ...] = ()
+    effect: Effect = Effect.NONE
+
+    @property
+    def header(self) -> str:
+        """Return the heading of the column, its unit in brackets."""
+        if not self.unit or self.name.startswith(self.unit):
+            return self.name
+        return f"{self.name} ({self.unit})"
+
+    @property
+    def shown_default(self) -> str:
+        """Return what an empty cell means, for people."""
+        return self.default or ", ".join(" ".join(pair) for pair in self.by_media)
+
+    @property
+    def keys(self) -> frozenset[str]:
+        """Return every spelling that names this column, as ``key`` makes it."""
+        return frozenset(key(name) for name in (self.name, *self.synonyms))
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Sheet:
+    """One sheet of the inventory."""
+
+    name: str
+    meaning: str
+    columns: tuple[Column, ...]
+    required: bool = False
+
+    def column(self, name: str) -> Column:
+        """Return a column by its own name."""
+        return next(column for column in self.columns if column.name == name)
+
+
+def key(text: str) -> str:
+    """Return a heading without case, blanks, punctuation and bracketed unit."""
+    plain = unicodedata.normalize("NFKC", text).casefold()
+    return re.sub(r"[\W_]+", "", re.sub(r"[(\[].*?[)\]]", "", plain))

@@ -1,0 +1,36 @@
+"""The one table of sheets and columns: reader, blank workbook, guides use it."""
+
+from placer.workbook.column import Sheet
+from placer.workbook.sheets.demand import CLASSES, LOAD, VOLUMES
+from placer.workbook.sheets.machines import ARRAYS, HOSTS, ROUTES
+from placer.workbook.sheets.pools import POOLS
+from placer.workbook.sheets.wishes import (
+    CONTROL,
+    FREEZES,
+    POLICY,
+    RULES,
+    SETTINGS,
+    WINDOWS,
+)
+
+__all__ = ["SETTINGS", "SHEETS", "sheet"]
+
+SHEETS = (
+    VOLUMES,
+    POOLS,
+    ARRAYS,
+    POLICY,
+    WINDOWS,
+    CLASSES,
+    LOAD,
+    HOSTS,
+    ROUTES,
+    RULES,
+    FREEZES,
+    CONTROL,
+)
+
+
+def sheet(name: str) -> Sheet:
+    """Return a sheet of the inventory by its name."""
+    return next(sheet for sheet in SHEETS if sheet.name == name)

@@ -1,0 +1,1 @@
+"""Sheets of the inventory, column by column; ``placer.workbook.columns`` joins them."""
