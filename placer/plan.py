@@ -109,19 +109,29 @@ class Goal:
 
     Goals are minimised, but for relief, which is maximised: its bound is never below
     its value.  Goals stand in the order in which they were solved.
+
+    Attributes
+    ----------
+    value
+        What the plan as it stands has.
+    reached
+        What the search reached for this goal; later goals may have spent some of it.
+    bound
+        What no plan within the goals before can surpass.
     """
 
     name: str
     value: float
+    reached: float
     bound: float
     unit: str
     stopped: Stopped = Stopped.DONE
 
     @property
     def gap(self) -> float:
-        """Distance from the bound as a share of the value, 0 where both agree."""
-        distance = abs(self.value - self.bound)
-        return 0.0 if distance == 0 else distance / max(abs(self.value), 1e-12)
+        """Distance of what was reached from the bound, as a share of what was reached."""
+        distance = abs(self.reached - self.bound)
+        return 0.0 if distance == 0 else distance / max(abs(self.reached), 1e-12)
 
 
 @dataclass(frozen=True, slots=True)

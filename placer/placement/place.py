@@ -1,0 +1,114 @@
+"""From candidates to a placement with its goals, or to what is missing."""
+
+from dataclasses import dataclass
+
+import numpy as np
+
+from placer.candidates.block import Floats, Ints
+from placer.candidates.groups import groups
+from placer.candidates.table import Candidates
+from placer.placement import goals, rows, shortage
+from placer.placement.layout import Layout, layout
+from placer.placement.reasons import reasons
+from placer.placement.search import Found, Progress, at_solution, search
+from placer.placement.settle import settle
+from placer.plan import Goal, Reason, Shortage
+
+
+@dataclass(frozen=True)
+class Placement:
+    """Where every volume shall be.
+
+    Attributes
+    ----------
+    places
+        (volumes,) column of the pool.
+    bought
+        (pools,) expansion steps.
+    reasons
+        Why each volume moves.
+    goals
+        Values and bounds, in the order of solving.
+    """
+
+    places: Ints
+    bought: Ints
+    reasons: tuple[Reason, ...]
+    goals: tuple[Goal, ...]
+
+
+@dataclass(frozen=True)
+class Nothing:
+    """No placement keeps every limit: what is missing, and the nearest placement.
+
+    ``timed_out`` tells that the search ended before it knew; ``places`` and ``bought``
+    are None where even the nearest placement is not known.
+    """
+
+    shortages: tuple[Shortage, ...]
+    places: Ints | None = None
+    bought: Ints | None = None
+    timed_out: bool = False
+
+
+def place(
+    candidates: Candidates, seconds: float, progress: Progress = lambda _: None
+) -> Placement | Nothing:
+    """Solve the placement of an estate.
+
+    Parameters
+    ----------
+    candidates
+        The table of the estate.
+    seconds
+        [s] time for the search.
+    progress
+        Told of each goal when it is solved.
+    """
+    homeless = shortage.homeless(candidates)
+    if homeless:
+        return Nothing(homeless)
+    every = range(len(candidates.volumes))
+    plan = layout(candidates, groups(candidates.volumes, every))
+    program = rows.program(plan)
+    start = _staying(plan)
+    found = search(program, goals.costs(plan), seconds, start, progress)
+    if found.x is None:
+        return _nothing(plan, seconds, timed_out=not found.impossible)
+    return _placement(plan, found)
+
+
+def _staying(plan: Layout) -> Floats | None:
+    """Return the solution in which nothing moves, None where a rule forbids it."""
+    nothing_bought = np.zeros(len(plan.estate.pools), dtype=np.int64)
+    try:
+        return plan.solution(plan.candidates.home, nothing_bought)
+    except KeyError:
+        return None
+
+
+def _placement(plan: Layout, found: Found) -> Placement:
+    assert found.x is not None
+    bought = plan.bought(found.x)
+    places = settle(found.program, plan, plan.places(found.x), bought)
+    x = plan.solution(places, bought)
+    costs = {cost.name: cost for cost in goals.costs(plan)}
+    return Placement(
+        places=places,
+        bought=bought,
+        reasons=tuple(reasons(plan.candidates, places)),
+        goals=tuple(at_solution(costs[goal.name], goal, x) for goal in found.goals),
+    )
+
+
+def _nothing(plan: Layout, seconds: float, *, timed_out: bool) -> Nothing:
+    """Find the placement that overruns its limits least, and name the overruns."""
+    nearest = shortage.nearest(plan, seconds)
+    if nearest is None:
+        return Nothing(shortage.contradiction(), timed_out=timed_out)
+    return Nothing(
+        shortage.shortages(plan, nearest),
+        plan.places(nearest.x),
+        plan.bought(nearest.x),
+        timed_out=timed_out and not nearest.short,
+    )

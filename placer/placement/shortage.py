@@ -1,0 +1,210 @@
+"""When no placement keeps every limit: how much of which limit is missing, and where.
+
+The limits are allowed to be overrun at a price, each in shares of itself; what is left
+over at the least price is the shortage, in trade units.
+"""
+
+from collections import Counter
+from dataclasses import dataclass
+
+import numpy as np
+
+from placer.candidates.block import Block, Floats, Ints
+from placer.candidates.limits import Date
+from placer.candidates.table import Candidates
+from placer.placement import nights, rows, solver
+from placer.placement.layout import Layout
+from placer.placement.matrix import Program, RowKey
+from placer.plan import Shortage
+from placer.units import GIB, PPM
+
+SMALLEST = 1e-5
+REMEDIES = {
+    "pool-room": "free room in the pool, buy drives, or raise its fill ceiling",
+    "pool-thin": "raise the provisioned ratio, or shrink what is provisioned",
+    "pool-busy": "add drives of this media, or take load off in this hour",
+    "pool-wear": "add drives, ask for a shorter life, or keep heavy writers elsewhere",
+    "controller-busy": (
+        "take requests off this array in this hour or add controllers; "
+        "a shelf of drives is no remedy"
+    ),
+    "array-volumes": "raise the number of volumes the array may hold, or merge volumes",
+    "array-hosts": "raise the number of hosts the array may serve",
+    "nights-in": "more or longer windows, or more MB/s into the array",
+    "nights-out": "more or longer windows, or more MB/s out of the array",
+    "nights-rate": "more or longer windows, or more MB/s in them",
+    "nights-cutovers": "more windows, or more cutovers in each",
+}
+
+
+@dataclass(frozen=True)
+class Nearest:
+    """The solution that overruns its limits least, and by how much each row.
+
+    ``short`` holds (row, share of the limit).
+    """
+
+    x: Floats
+    short: tuple[tuple[int, float], ...]
+
+
+def homeless(candidates: Candidates) -> tuple[Shortage, ...]:
+    """Name the volumes that no pool may take, each with the reasons."""
+    return tuple(
+        _homeless_one(candidates, int(row))
+        for row in np.flatnonzero(~candidates.allowed.any(axis=1))
+    )
+
+
+def _homeless_one(candidates: Candidates, row: int) -> Shortage:
+    volume = candidates.volumes[row]
+    said = [
+        (refusal.code, f"{pool.id}: {refusal.sentence}")
+        for pool in candidates.pools
+        for refusal in candidates.reach.refusals(volume, pool)
+    ]
+    commonest = Counter(code for code, _ in said).most_common(1)[0][0]
+    return Shortage(
+        limit=commonest,
+        where=volume.id,
+        amount=1,
+        unit="volumes",
+        sentence=f"no pool may take {volume.id}: " + "; ".join(s for _, s in said),
+        remedy="relax one of the rules named, or add a pool that they allow",
+    )
+
+
+def contradiction() -> tuple[Shortage, ...]:
+    """Say that the rules themselves leave no placement, whatever the limits."""
+    return (
+        Shortage(
+            limit="rules",
+            where="",
+            amount=1,
+            unit="placements",
+            sentence="the rules (apart, together, only on, never on, leave where it is)"
+            " contradict each other: even without any limit no placement keeps them",
+            remedy="relax the rules one at a time",
+        ),
+    )
+
+
+def nearest(layout: Layout, seconds: float) -> Nearest | None:
+    """Return the placement with the least sum of overruns, None if rules forbid all."""
+    program = rows.program(layout)
+    soft = np.array([i for i, k in enumerate(program.keys) if _may_overrun(program, i, k)])
+    elastic = program.elastic(soft)
+    cost = np.concatenate([np.zeros(program.columns), np.ones(len(soft))])
+    answer = solver.solve(elastic, cost, seconds=seconds, gap=1e-3)
+    if answer.x is None:
+        return None
+    over = answer.x[program.columns :]
+    short = [(int(soft[i]), float(over[i])) for i in np.flatnonzero(over > SMALLEST)]
+    return Nearest(answer.x[: program.columns], tuple(short))
+
+
+def _may_overrun(program: Program, row: int, key: RowKey) -> bool:
+    """Markers (sides of 0) and rules stay hard; limits with a side may be overrun."""
+    return key.code in REMEDIES and bool(program.high[row] > 0 or key.hour >= 0)
+
+
+def shortages(layout: Layout, found: Nearest) -> tuple[Shortage, ...]:
+    """Word the overruns: for each limit and owner the hour that lacks most."""
+    keys = rows.program(layout).keys
+    worst: dict[tuple[str, str], tuple[int, float]] = {}
+    for row, share in sorted(found.short, key=lambda pair: pair[1]):
+        worst[keys[row].code, keys[row].owner] = (keys[row].hour, share)
+    words = Words(layout, layout.places(found.x), layout.bought(found.x))
+    return tuple(words.say(*where, hour) for where, (hour, _) in sorted(worst.items()))
+
+
+class Words:
+    """Puts the overruns of one placement into trade units."""
+
+    def __init__(self, layout: Layout, places: Ints, bought: Ints) -> None:
+        self._candidates = layout.candidates
+        self._places, self._bought = places, bought
+        self._blocks = {block.code: block for block in self._candidates.limits}
+
+    def say(self, code: str, owner: str, hour: int) -> Shortage:
+        """Return the shortage of one limit."""
+        block = self._blocks.get(code)
+        if block is None:
+            return self._of_nights(code, owner)
+        at = block.owners.index(owner)
+        use = float(block.use(self._places)[at, hour])
+        limit = self._limit(block, at)
+        amount, unit = self._amount(block, at, hour, use, limit)
+        label = self._candidates.estate.hours[hour].label if block.hours > 1 else ""
+        when = f" at {label}" if label else ""
+        return Shortage(
+            limit=code,
+            where=owner,
+            amount=amount,
+            unit=unit,
+            hour=label,
+            sentence=f"{owner}: {amount:,.6g} {unit} short{when}",
+            remedy=REMEDIES[code],
+        )
+
+    def _limit(self, block: Block, owner: int) -> float:
+        """Return the limit with what is bought in the owner's own pool."""
+        steps = [int(self._bought[p]) for p, o in enumerate(block.owner_of) if o == owner]
+        one_pool = len(steps) == 1
+        return float(block.limits[owner, steps[0] if one_pool else 0])
+
+    def _amount(
+        self, block: Block, owner: int, hour: int, use: float, limit: float
+    ) -> tuple[float, str]:
+        if block.code == "controller-busy":
+            requests = self._requests(block, owner, hour)
+            return requests * (use - limit) / use, "requests/s"
+        if block.code == "pool-busy":
+            return 100 * (use - limit) / max(self._drives(block, owner), 1), "busy-percent"
+        return (use - limit) / block.scale, block.unit
+
+    def _requests(self, block: Block, owner: int, hour: int) -> float:
+        """Return the requests/s that the owner's controllers are asked for."""
+        there = block.owner_of[self._places] == owner
+        return float(block.asks[there, hour, :2].sum())
+
+    def _drives(self, block: Block, owner: int) -> float:
+        pool = int(np.flatnonzero(block.owner_of == owner)[0])
+        ceiling = self._candidates.pools[pool].busy_ceiling / PPM
+        return float(block.limits[owner, int(self._bought[pool])]) / ceiling
+
+    def _of_nights(self, code: str, owner: str) -> Shortage:
+        amount, unit = self._missing_in_nights(code, owner)
+        where = owner or "all windows"
+        return Shortage(
+            limit=code,
+            where=where,
+            amount=amount,
+            unit=unit,
+            sentence=f"{where}: the windows carry {amount:,.6g} {unit} too little",
+            remedy=REMEDIES[code],
+        )
+
+    def _missing_in_nights(self, code: str, owner: str) -> tuple[float, str]:
+        moving = [int(v) for v in np.flatnonzero(self._places != self._home)]
+        for known, who, moved, most in nights.capacities(self._candidates):
+            if (known, who) == (code, owner):
+                total = sum(moved(v, int(self._places[v])) for v in moving)
+                return (total - most) / GIB, "GiB"
+        if code == "array-hosts":
+            return self._hosts(owner), "hosts"
+        most = nights.cutovers(self._candidates.estate) or 0
+        return max(1.0, len(moving) - most), "cutovers"
+
+    @property
+    def _home(self) -> Ints:
+        return Date(self._candidates.estate, 0).home
+
+    def _hosts(self, owner: str) -> float:
+        here = {
+            volume.host
+            for volume, pool in zip(self._candidates.volumes, self._places, strict=True)
+            if self._candidates.pools[pool].array == owner and volume.host
+        }
+        arrays = {array.name: array for array in self._candidates.estate.arrays}
+        return float(len(here) - arrays[owner].hosts_at_most)
