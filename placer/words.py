@@ -1,0 +1,79 @@
+"""Sentences about a plan, the same in the file and on the terminal."""
+
+from math import isinf
+
+from placer.plan import Goal, Plan, Status, Stopped
+from placer.units import CENTS
+from placer.windows.clock import local
+
+PROVEN_GAP = 1e-4
+_TITLES = {"missed": "response limits missed", "effort": "copying and cutovers"}
+
+CAUTIONS = (
+    "No volume moves before a backup of it has been proven by a restore.",
+    "Start only with an approved change in hand.",
+    "Follow the vendor's guidance for host paths and for copy services.",
+    "Only qualified staff carry out these steps.",
+    "Have a tested way back for every cutover.",
+    "Start nothing while a rebuild runs on either array.",
+    "All figures are estimates from measured averages; watch the real ones.",
+    "Where local rules differ from this sheet, local rules win.",
+)
+
+
+def clock(instant: int, zone: str) -> str:
+    """Return an instant [min UTC] as ``2026-05-08 22:00+02:00``."""
+    return local(instant, zone).isoformat(" ", "minutes")
+
+
+def title(goal: Goal) -> str:
+    """Return what a goal is called in front of people."""
+    return _TITLES.get(goal.name, goal.name)
+
+
+def value(goal: Goal, currency: str = "") -> str:
+    """Return a goal's value with its unit; money in whole units of the currency."""
+    if goal.name == "money":
+        return f"{goal.value / CENTS:,.2f} {currency}".rstrip()
+    return f"{goal.value:,.10g} {goal.unit}".rstrip()
+
+
+def gap(goal: Goal) -> str:
+    """Say how far a goal's value may be from the best that any plan could reach."""
+    if isinf(goal.bound):
+        words = "no bound known"
+    elif goal.gap <= PROVEN_GAP:
+        words = "proven best"
+    else:
+        words = f"within {_share(goal.gap)} of the best possible"
+    ended = "" if goal.stopped is Stopped.DONE else f" ({goal.stopped})"
+    return words + ended + _given_up(goal)
+
+
+def _given_up(goal: Goal) -> str:
+    lost = abs(goal.reached - goal.value)
+    if lost <= PROVEN_GAP * abs(goal.reached) or goal.reached == 0:
+        return ""
+    return f", {_share(lost / abs(goal.reached))} of it given up for later goals"
+
+
+def _share(part: float) -> str:
+    percent = 100 * part
+    return f"{percent:.2g} %" if percent < 10 else f"{percent:,.0f} %"
+
+
+def stopped(plan: Plan) -> Stopped:
+    """Return why the search ended: the first goal that was cut short says it."""
+    cut = (g.stopped for g in plan.goals if g.stopped is not Stopped.DONE)
+    return next(cut, Stopped.DONE)
+
+
+def status(plan: Plan) -> str:
+    """Say in one sentence whether the plan can be used."""
+    if plan.status is Status.NO_PLAN:
+        return f"No plan is possible: {len(plan.shortages)} shortage(s) stand below."
+    if not plan.moves and not plan.left:
+        return "Nothing has to move."
+    words = "Proven best" if plan.status is Status.PROVEN else "Within the gap stated"
+    left = f"; {len(plan.left)} move(s) left over" if plan.left else ""
+    return f"{words}: {len(plan.moves)} move(s){left}."

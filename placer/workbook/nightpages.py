@@ -1,0 +1,146 @@
+"""The run sheet: what the operator of the night prints, follows and fills in."""
+
+from collections.abc import Iterable, Sequence
+
+from openpyxl.workbook import Workbook
+from openpyxl.worksheet.pagebreak import Break
+
+from placer.estate import Control, Estate
+from placer.plan import Plan
+from placer.tally import Night, Total, nights, totals
+from placer.units import GIB, MILLI
+from placer.windows.clock import local
+from placer.words import CAUTIONS, clock
+from placer.workbook import style
+from placer.workbook.cellkinds import (
+    GIBIBYTES,
+    MEGABYTES_PER_SECOND,
+    REAL,
+    TEXT,
+    WHOLE,
+    Raw,
+    escape,
+)
+from placer.workbook.grid import Grid, Heading
+from placer.workbook.runsheet import Section, Step, sections
+
+RUN_SHEET = "run sheet"
+_BOX = "\N{BALLOT BOX}"
+_STEP: Sequence[Heading] = (
+    ("time", TEXT),
+    ("what", TEXT),
+    ("move", TEXT),
+    ("volume", TEXT),
+    ("from", TEXT),
+    ("to", TEXT),
+    ("rate (MB/s)", MEGABYTES_PER_SECOND),
+    ("latest start", TEXT),
+    ("done", TEXT),
+    ("actual time", TEXT),
+    ("remark", TEXT),
+)
+_CONTROL: Sequence[Heading] = (
+    ("control totals", TEXT),
+    ("volumes (owner)", WHOLE),
+    ("(inventory)", WHOLE),
+    ("provisioned GiB (owner)", GIBIBYTES),
+    ("(inventory)", GIBIBYTES),
+    ("requests/s (owner)", REAL),
+    ("(inventory)", REAL),
+)
+_HAND_WRITTEN = {10: 11, 11: 22}
+
+
+def run_sheet(book: Workbook, estate: Estate, plan: Plan) -> None:
+    """Write cautions, the owner's totals, and every step in clock order."""
+    grid = Grid(book.create_sheet(RUN_SHEET))
+    grid.line(f"Run sheet for {plan.inventory}", style.TITLE)
+    grid.line("Before anything starts", style.BOLD)
+    for number, caution in enumerate(CAUTIONS, start=1):
+        grid.line(f"{number}.  {caution}")
+    if estate.controls:
+        grid.gap()
+        grid.listing(_CONTROL, _controls(estate))
+    grid.gap()
+    titles = grid.row
+    grid.header(_STEP)
+    _sections(grid, estate, plan)
+    grid.widths |= _HAND_WRITTEN
+    style.fit(grid.sheet, grid.widths)
+    style.paper(grid.sheet, titles)
+
+
+def _controls(estate: Estate) -> Iterable[Sequence[Raw]]:
+    found = {total.array: total for total in totals(estate)}
+    for control in estate.controls:
+        if control.array in found:
+            yield _control(control, found[control.array])
+
+
+def _control(control: Control, total: Total) -> Sequence[Raw]:
+    typed, requests = control.provisioned, control.requests
+    return (
+        escape(control.array) or "all",
+        control.volumes,
+        total.volumes,
+        None if typed is None else typed / GIB,
+        total.provisioned / GIB,
+        None if requests is None else requests / MILLI,
+        total.requests / MILLI,
+    )
+
+
+def _sections(grid: Grid, estate: Estate, plan: Plan) -> None:
+    loads = {night.window.name: night for night in nights(estate, plan)}
+    for number, section in enumerate(sections(estate, plan)):
+        if number and section.window:
+            grid.sheet.row_breaks.append(Break(id=grid.row - 1))
+        night = loads.get(section.window.name) if section.window else None
+        style.band(grid.sheet, grid.row, _heading(section, night), len(_STEP))
+        grid.row += 1
+        for step in section.steps:
+            grid.cells([kind for _, kind in _STEP], _row(step, section))
+            style.underline(grid.sheet, grid.row - 1, len(_STEP))
+
+
+def _heading(section: Section, night: Night | None) -> str:
+    window, zone = section.window, section.zone
+    if window is None:
+        day = local(section.begins, zone)
+        return f"{day:%a %Y-%m-%d}, outside the windows"
+    opens, closes = local(window.start, zone), clock(window.end, zone)
+    named = (
+        f"{opens:%a} {clock(window.start, zone)} to {closes}   {escape(window.name)}"
+    )
+    return named if night is None else f"{named}   {_load(night)}"
+
+
+def _load(night: Night) -> str:
+    copied = f"{night.copies} copies, {night.carried / GIB:,.0f} GiB"
+    return f"{copied}, {night.cutovers} cutovers"
+
+
+def _row(step: Step, section: Section) -> Sequence[Raw]:
+    move, zone = step.move, section.zone
+    begins = local(section.begins, zone).utcoffset()
+
+    def hand(instant: int) -> str:
+        """Return day and time; with the offset where the clock was changed since."""
+        moment = local(instant, zone)
+        shown = f"{moment:%a %H:%M}"
+        changed = moment.utcoffset() != begins
+        return f"{shown}{clock(instant, zone)[-6:]}" if changed else shown
+
+    return (
+        hand(step.instant),
+        escape(step.what),
+        escape(move.id),
+        escape(move.volume),
+        escape(move.source),
+        escape(move.target),
+        None if step.rate is None else MEGABYTES_PER_SECOND.cell(step.rate, zone),
+        None if step.latest is None else hand(step.latest),
+        _BOX,
+        None,
+        None,
+    )

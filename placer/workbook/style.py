@@ -1,0 +1,102 @@
+"""How a plan workbook looks: type, colours and print set-up.
+
+Colours come from the palette of Okabe and Ito ("Color Universal Design", 2008), made
+for colour-blind readers, and never carry a meaning alone.
+"""
+
+from collections.abc import Mapping
+from typing import cast
+
+from openpyxl.cell.cell import Cell
+from openpyxl.styles import Alignment, Border, Font, PatternFill, Side
+from openpyxl.utils import get_column_letter
+from openpyxl.worksheet.header_footer import HeaderFooterItem
+from openpyxl.worksheet.worksheet import Worksheet
+
+from placer.workbook.cellkinds import Raw
+
+_BLUE = "0072B2"
+_SKY_BLUE = "56B4E9"
+_FACE = "Arial"
+_LINE = Side(style="thin", color="999999")
+_RISKY = ("=", "+", "-", "@", "\t")
+
+PLAIN = Font(name=_FACE, size=10)
+BOLD = Font(name=_FACE, size=10, bold=True)
+TITLE = Font(name=_FACE, size=14, bold=True)
+_HEADER = Font(name=_FACE, size=10, bold=True, color="FFFFFF")
+_UNDER = Border(bottom=_LINE)
+_HEADER_FILL = PatternFill("solid", fgColor=_BLUE)
+_BAND_FILL = PatternFill("solid", fgColor=_SKY_BLUE)
+_TOP = Alignment(vertical="top")
+RUNNING = _TOP
+_OVER_NUMBERS = Alignment(horizontal="right", vertical="top", wrap_text=True)
+_WRAPPED = Alignment(vertical="top", wrap_text=True)
+WIDEST = 60
+
+
+def at(sheet: Worksheet, row: int, column: int) -> Cell:
+    """Return a cell; none is ever merged in these sheets."""
+    return cast("Cell", sheet.cell(row, column))
+
+
+def put(cell: Cell, value: Raw, number_format: str = "General") -> None:
+    """Write a value: text never as a formula, a float with every digit it has."""
+    cell.font = PLAIN
+    cell.number_format = number_format
+    cell.alignment = _WRAPPED if _is_long(value) else _TOP
+    if isinstance(value, float):
+        cell.value = repr(value)
+        cell.data_type = "n"
+    elif value != "":
+        cell.value = value
+        if isinstance(value, str):
+            cell.data_type = "s"
+            cell.quotePrefix = value.startswith(_RISKY)
+
+
+def _is_long(value: Raw) -> bool:
+    return isinstance(value, str) and len(value) > WIDEST
+
+
+def header(cell: Cell, text: str, number: bool) -> None:
+    """Write the header of a column, over its numbers or over its text."""
+    put(cell, text)
+    cell.font, cell.fill = _HEADER, _HEADER_FILL
+    cell.alignment = _OVER_NUMBERS if number else _WRAPPED
+
+
+def band(sheet: Worksheet, row: int, text: str, columns: int) -> None:
+    """Write a heading across the columns of a sheet."""
+    put(at(sheet, row, 1), text)
+    for column in range(1, columns + 1):
+        cell = sheet.cell(row, column)
+        cell.font, cell.fill, cell.alignment = BOLD, _BAND_FILL, _TOP
+
+
+def underline(sheet: Worksheet, row: int, columns: int) -> None:
+    """Draw a line under a row, for the eye to follow it on paper."""
+    for column in range(1, columns + 1):
+        sheet.cell(row, column).border = _UNDER
+
+
+def fit(sheet: Worksheet, widths: Mapping[int, int]) -> None:
+    """Set the widths of columns, given in characters."""
+    for column, characters in widths.items():
+        sheet.column_dimensions[get_column_letter(column)].width = characters + 2
+
+
+def paper(sheet: Worksheet, titles: int | None = None) -> None:
+    """Set up A4 landscape, one page wide, titles repeated, pages numbered."""
+    sheet.page_setup.orientation = "landscape"
+    sheet.page_setup.paperSize = 9  # A4 in ECMA-376 part 1, 18.3.1.63
+    sheet.page_setup.fitToWidth = 1
+    sheet.page_setup.fitToHeight = 0
+    if sheet.sheet_properties.pageSetUpPr is not None:
+        sheet.sheet_properties.pageSetUpPr.fitToPage = True
+    footer = HeaderFooterItem()
+    footer.left.text, footer.right.text = "&A", "page &P of &N"
+    sheet.oddFooter = footer
+    sheet.page_margins.left = sheet.page_margins.right = 0.4
+    if titles:
+        sheet.print_title_rows = f"{titles}:{titles}"
