@@ -1,7 +1,7 @@
 """Recurrences: weekday words and RFC 5545 rules to dates."""
 
 import re
-from datetime import UTC, date, datetime, time, timedelta
+from datetime import UTC, date, datetime, time, timedelta, tzinfo
 
 from dateutil.rrule import rrulestr
 
@@ -11,9 +11,13 @@ _DAYS = ("monday", "tuesday", "wednesday", "thursday", "friday", "saturday", "su
 _CODES = ("MO", "TU", "WE", "TH", "FR", "SA", "SU")
 _GROUPS = {"daily": "mon-sun", "weekdays": "mon-fri", "weekends": "sat-sun"}
 _FREQUENCIES = ("DAILY", "WEEKLY", "MONTHLY", "YEARLY")
-_CLOCK_PARTS = ("BYHOUR", "BYMINUTE", "BYSECOND")
+_CLOCK_PARTS = {"BYHOUR", "BYMINUTE", "BYSECOND"}
 _DAY_PARTS = {"BYDAY", "BYMONTHDAY", "BYYEARDAY"}
+_HIGHEST = {"BYMONTH": 12, "BYMONTHDAY": 31, "BYYEARDAY": 366, "BYWEEKNO": 53}
+_NUMBERED = {"MONTHLY": 5, "YEARLY": 53}
+_DATED = re.compile(r"(DTSTART|EXDATE)(?:;[^:]*)?:(\d{8}(?:T\d{6}Z?)?(?:,\d{8}.*)?)")
 _MOMENT = re.compile(r"(UNTIL=)?(\d{8}T\d{6})(Z?)")
+_UNTIL = re.compile(r"\d{8}(T\d{6}Z?)?")
 
 
 def dates(
@@ -29,8 +33,8 @@ def dates(
     ----------
     opens_on
         Weekday words ("Fri", "Mon-Thu", "Mon, Wed", "daily", "weekdays", "weekends") or
-        an RFC 5545 rule ("FREQ=MONTHLY;BYDAY=1SA"), with DTSTART, EXDATE and RDATE
-        lines if need be.
+        an RFC 5545 rule ("FREQ=MONTHLY;BYDAY=1SA"), with DTSTART and EXDATE lines
+        beside it if need be; of these only the dates count.
     first, last
         Range asked for; ``first`` stands in for a missing DTSTART.  It is a date of the
         recurrence only where the rule says so.
@@ -42,25 +46,97 @@ def dates(
     ValueError
         The text is neither, the rule is wrong, or it repeats within a day.
     """
-    text = " ".join(opens_on.upper().split())
-    rule = text if "=" in text else _rule_of_words(opens_on)
-    _check(_parts(rule), opens_on)
-    rule = re.sub(r"DTSTART[^: ]*:|EXDATE[^: ]*:|RDATE[^: ]*:", _without_zone, rule)
-    rule = _MOMENT.sub(lambda moment: _day_of(moment, at, zone), rule)
-    return _between(rule, opens_on, first, last)
+    rule, dated = _lines(opens_on)
+    _check(_parts(rule, opens_on), opens_on)
+    text = "\n".join((*dated, f"RRULE:{rule}"))
+    place = zone_named(zone)
+    start, end = (datetime.combine(day, time.min) for day in (first, last))
+    try:
+        days = _MOMENT.sub(lambda moment: _day_of(moment, at, place), text)
+        found = rrulestr(days, dtstart=start, forceset=True)
+    except ValueError as error:
+        raise _wrong(opens_on, str(error)) from None
+    return tuple(when.date() for when in found.between(start, end, inc=True))
 
 
 def counts_from_a_date(opens_on: str) -> bool:
     """Return whether a recurrence means nothing without a date to count from.
 
     So it is with an interval, a count, or a day that only the first date names.
+
+    Raises
+    ------
+    ValueError
+        The text is neither weekday words nor a rule.
     """
-    text = " ".join(opens_on.upper().split())
-    if "=" not in text or "DTSTART" in text:
-        return False
-    parts = _parts(text)
+    rule, dated = _lines(opens_on)
+    parts = _parts(rule, opens_on)
     fixed = parts.get("FREQ") == "DAILY" or bool(_DAY_PARTS & parts.keys())
-    return not fixed or "COUNT" in parts or parts.get("INTERVAL", "1") != "1"
+    counts = not fixed or "COUNT" in parts or parts.get("INTERVAL", "1") != "1"
+    return counts and not any(line.startswith("DTSTART") for line in dated)
+
+
+def _lines(said: str) -> tuple[str, list[str]]:
+    """Return the rule and the dated lines beside it, these without their zones."""
+    if "=" not in said:
+        return _rule_of_words(said), []
+    lines = said.upper().split()
+    dated = [_DATED.sub(r"\1:\2", line) for line in lines if _DATED.fullmatch(line)]
+    rules = [line for line in lines if not _DATED.fullmatch(line)]
+    if len(rules) != 1:
+        raise _wrong(said, "one rule, and beside it DTSTART or EXDATE with dates")
+    return rules[0].removeprefix("RRULE:"), dated
+
+
+def _parts(rule: str, said: str) -> dict[str, str]:
+    """Return the parts of a rule, such as FREQ and BYDAY."""
+    pairs = [part.partition("=") for part in rule.split(";")]
+    parts = {name: value for name, _, value in pairs if name and value}
+    if len(parts) != len(pairs):
+        raise _wrong(said, "its parts read NAME=VALUE;NAME=VALUE, no name twice")
+    return parts
+
+
+def _check(parts: dict[str, str], said: str) -> None:
+    """Refuse what has no sense for whole days, has no end or no dates."""
+    frequency = parts.get("FREQ", "")
+    if frequency not in _FREQUENCIES:
+        raise _wrong(said, "FREQ must be one of " + ", ".join(_FREQUENCIES))
+    if _CLOCK_PARTS & parts.keys():
+        raise _wrong(said, "the time of day stands on its own, not in the rule")
+    if "COUNT" in parts and "UNTIL" in parts:
+        raise _wrong(said, "it has both COUNT and UNTIL; keep one")
+    if not _UNTIL.fullmatch(parts.get("UNTIL", "20000101")):
+        raise _wrong(said, "UNTIL is a date such as 20261231")
+    for part in ("INTERVAL", "COUNT"):
+        if not re.fullmatch(r"0*[1-9]\d{0,4}", parts.get(part, "1")):
+            raise _wrong(said, f"{part} must be a whole number from 1 to 99999")
+    _check_numbers(parts, said)
+
+
+def _check_numbers(parts: dict[str, str], said: str) -> None:
+    """Refuse numbers of days, weeks and months that no year has."""
+    for part, highest in _HIGHEST.items():
+        for value in parts.get(part, "1").split(","):
+            if (
+                not re.fullmatch(r"[+-]?0*[1-9]\d{0,2}", value)
+                or abs(int(value)) > highest
+            ):
+                raise _wrong(said, f"{part} goes from 1 to {highest}")
+    numbers = [int(number) for number in re.findall(r"\d+", parts.get("BYDAY", ""))]
+    weeks = _NUMBERED.get(parts["FREQ"], 0)
+    if max(numbers, default=0) > (min(weeks, 5) if "BYMONTH" in parts else weeks):
+        sentence = "BYDAY numbers weekdays up to 5 in a month, up to 53 in a year"
+        raise _wrong(said, sentence)
+
+
+def _day_of(moment: re.Match[str], at: time, zone: tzinfo) -> str:
+    """Return a moment as a local date; for UNTIL the last whose ``at`` is within."""
+    when = datetime.strptime(moment[2], "%Y%m%dT%H%M%S")
+    if moment[3]:
+        when = when.replace(tzinfo=UTC).astimezone(zone)
+    early = bool(moment[1]) and when.time() < at
+    return f"{moment[1] or ''}{when.date() - timedelta(days=early):%Y%m%d}"
 
 
 def _rule_of_words(words: str) -> str:
@@ -69,7 +145,7 @@ def _rule_of_words(words: str) -> str:
     items = [item for item in re.split(r"[\s,;]+|\band\b", text) if item]
     found = {day for item in items for day in _days(_GROUPS.get(item, item), words)}
     if not found:
-        raise _not_days(words)
+        raise _no_days(words)
     return "FREQ=WEEKLY;BYDAY=" + ",".join(_CODES[day] for day in sorted(found))
 
 
@@ -84,62 +160,17 @@ def _days(item: str, words: str) -> list[int]:
 def _weekday(name: str, words: str) -> int:
     """Return the number of a weekday from its name or the first letters of it."""
     for number, day in enumerate(_DAYS):
-        if len(name) >= 2 and name in (day[: len(name)], day + "s"):
+        if len(name) >= 2 and f"{day}s".startswith(name):
             return number
-    raise _not_days(words)
+    raise _no_days(words)
 
 
-def _not_days(words: str) -> ValueError:
+def _no_days(words: str) -> ValueError:
     return ValueError(
         f'"{words}" names no days; write Fri, Mon-Thu, "Mon, Wed", daily, weekdays, '
         "or a rule such as FREQ=WEEKLY;BYDAY=TU"
     )
 
 
-def _parts(text: str) -> dict[str, str]:
-    """Return the parts of the rule line, such as FREQ and BYDAY."""
-    lines = [line for line in text.split() if "FREQ=" in line]
-    line = lines[0].removeprefix("RRULE:") if lines else ""
-    return {
-        name: value for name, _, value in (p.partition("=") for p in line.split(";"))
-    }
-
-
-def _check(parts: dict[str, str], said: str) -> None:
-    """Refuse what has no sense for whole days or would never end."""
-    frequency = parts.get("FREQ", "")
-    if frequency not in _FREQUENCIES:
-        raise ValueError(
-            f'"{said}" must repeat by days or longer: FREQ is one of '
-            + ", ".join(_FREQUENCIES)
-        )
-    if any(part in parts for part in _CLOCK_PARTS):
-        raise ValueError(f'"{said}" names hours; the time of day stands on its own')
-    if "COUNT" in parts and "UNTIL" in parts:
-        raise ValueError(f'"{said}" has both COUNT and UNTIL; keep one')
-    for part in ("INTERVAL", "COUNT"):
-        if not re.fullmatch(r"0*[1-9]\d*", parts.get(part, "1")):
-            raise ValueError(f'"{said}": {part} must be a whole number above 0')
-
-
-def _without_zone(head: re.Match[str]) -> str:
-    """Return "DTSTART:" for "DTSTART;TZID=...:": only the dates count here."""
-    return head[0].partition(";")[0].rstrip(":") + ":"
-
-
-def _day_of(moment: re.Match[str], at: time, zone: str) -> str:
-    """Return a moment as a local date; for UNTIL the last whose ``at`` is within."""
-    when = datetime.strptime(moment[2], "%Y%m%dT%H%M%S")
-    if moment[3]:
-        when = when.replace(tzinfo=UTC).astimezone(zone_named(zone))
-    early = bool(moment[1]) and when.time() < at
-    return f"{moment[1] or ''}{when.date() - timedelta(days=early):%Y%m%d}"
-
-
-def _between(rule: str, said: str, first: date, last: date) -> tuple[date, ...]:
-    start, end = (datetime.combine(day, time.min) for day in (first, last))
-    try:
-        found = rrulestr(rule, dtstart=start, forceset=True, ignoretz=True)
-    except (ValueError, KeyError, TypeError, AttributeError) as error:
-        raise ValueError(f'"{said}" is no recurrence rule: {error}') from None
-    return tuple(when.date() for when in found.between(start, end, inc=True))
+def _wrong(said: str, why: str) -> ValueError:
+    return ValueError(f'"{said}" is no rule of days (RFC 5545): {why}')
