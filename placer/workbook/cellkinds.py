@@ -102,6 +102,7 @@ def choice(options: type[StrEnum]) -> Kind:
         lambda value, _zone: value.value,
         lambda raw: options(_read_text(raw)),
         f"one of: {known}",
+        "@",
     )
 
 

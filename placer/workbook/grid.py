@@ -28,6 +28,7 @@ class Grid:
         self.sheet = sheet
         self.row = 1
         self.widths: dict[int, int] = {}
+        self._headers: list[int] = []
 
     def line(self, text: str, font: Font = style.PLAIN) -> None:
         """Write one line of text that may run across the columns."""
@@ -35,6 +36,11 @@ class Grid:
         style.put(cell, TEXT.cell(text, ""), TEXT.number_format)
         cell.font, cell.alignment = font, style.RUNNING
         self.row += 1
+
+    def title(self, text: str) -> None:
+        """Write the title of the sheet."""
+        self.line(text)
+        style.title(self.sheet, self.row - 1)
 
     def gap(self) -> None:
         """Leave one row free."""
@@ -46,6 +52,7 @@ class Grid:
             number = kind.number_format != TEXT.number_format
             style.header(style.at(self.sheet, self.row, column), title, number)
             self._widen(column, max(map(len, title.split())))
+        self._headers.append(self.row)
         self.row += 1
 
     def cells(self, kinds: Iterable[Kind], values: Iterable[Raw]) -> None:
@@ -81,12 +88,16 @@ class Grid:
         for row in rows:
             self.cells([kind for _, kind in columns], row)
 
+    def settle(self) -> None:
+        """Give the columns the widths that their tables need."""
+        style.fit(self.sheet, self.widths, self._headers)
+
     def finish(self, columns: int) -> None:
         """Make a sheet that is one table easy to use: frozen, filtered, fitted."""
         last = max(self.row - 1, 1)
         self.sheet.freeze_panes = "A2"
         self.sheet.auto_filter.ref = f"A1:{get_column_letter(columns)}{last}"
-        style.fit(self.sheet, self.widths)
+        self.settle()
         style.paper(self.sheet, titles=1)
 
 

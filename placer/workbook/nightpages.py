@@ -1,6 +1,6 @@
 """The run sheet: what the operator of the night prints, follows and fills in."""
 
-from collections.abc import Iterable, Sequence
+from collections.abc import Iterator, Sequence
 
 from openpyxl.workbook import Workbook
 from openpyxl.worksheet.pagebreak import Break
@@ -13,11 +13,9 @@ from placer.windows.clock import local
 from placer.words import CAUTIONS, clock
 from placer.workbook import style
 from placer.workbook.cellkinds import (
-    GIBIBYTES,
     MEGABYTES_PER_SECOND,
     REAL,
     TEXT,
-    WHOLE,
     Raw,
     escape,
 )
@@ -40,13 +38,10 @@ _STEP: Sequence[Heading] = (
     ("remark", TEXT),
 )
 _CONTROL: Sequence[Heading] = (
-    ("control totals", TEXT),
-    ("volumes (owner)", WHOLE),
-    ("(inventory)", WHOLE),
-    ("provisioned GiB (owner)", GIBIBYTES),
-    ("(inventory)", GIBIBYTES),
-    ("requests/s (owner)", REAL),
-    ("(inventory)", REAL),
+    ("totals", TEXT),
+    ("of", TEXT),
+    ("owner's", REAL),
+    ("inventory", REAL),
 )
 _HAND_WRITTEN = {10: 11, 11: 22}
 
@@ -54,7 +49,7 @@ _HAND_WRITTEN = {10: 11, 11: 22}
 def run_sheet(book: Workbook, estate: Estate, plan: Plan) -> None:
     """Write cautions, the owner's totals, and every step in clock order."""
     grid = Grid(book.create_sheet(RUN_SHEET))
-    grid.line(f"Run sheet for {plan.inventory}", style.TITLE)
+    grid.title(f"Run sheet for {plan.inventory}")
     grid.line("Before anything starts", style.BOLD)
     for number, caution in enumerate(CAUTIONS, start=1):
         grid.line(f"{number}.  {caution}")
@@ -66,28 +61,28 @@ def run_sheet(book: Workbook, estate: Estate, plan: Plan) -> None:
     grid.header(_STEP)
     _sections(grid, estate, plan)
     grid.widths |= _HAND_WRITTEN
-    style.fit(grid.sheet, grid.widths)
+    grid.settle()
     style.paper(grid.sheet, titles)
 
 
-def _controls(estate: Estate) -> Iterable[Sequence[Raw]]:
+def _controls(estate: Estate) -> Iterator[Sequence[Raw]]:
+    """Yield the totals typed by the owner beside those of the inventory."""
     found = {total.array: total for total in totals(estate)}
     for control in estate.controls:
         if control.array in found:
-            yield _control(control, found[control.array])
+            yield from _control(control, found[control.array])
 
 
-def _control(control: Control, total: Total) -> Sequence[Raw]:
-    typed, requests = control.provisioned, control.requests
-    return (
-        escape(control.array) or "all",
-        control.volumes,
-        total.volumes,
-        None if typed is None else typed / GIB,
-        total.provisioned / GIB,
-        None if requests is None else requests / MILLI,
-        total.requests / MILLI,
+def _control(control: Control, total: Total) -> Iterator[Sequence[Raw]]:
+    of = escape(control.array) or "all"
+    pairs = (
+        ("volumes", control.volumes, total.volumes, 1),
+        ("GiB", control.provisioned, total.provisioned, GIB),
+        ("requests/s", control.requests, total.requests, MILLI),
     )
+    for what, typed, counted, unit in pairs:
+        if typed is not None:
+            yield of, what, typed / unit, counted / unit
 
 
 def _sections(grid: Grid, estate: Estate, plan: Plan) -> None:

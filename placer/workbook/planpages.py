@@ -60,7 +60,7 @@ _FINDING: Sequence[Heading] = (
 def summary(book: Workbook, estate: Estate, plan: Plan, verdict: str) -> None:
     """Write the sheet that says what came out."""
     grid = Grid(book.create_sheet(SUMMARY))
-    grid.line(f"Plan for {plan.inventory}", style.TITLE)
+    grid.title(f"Plan for {plan.inventory}")
     grid.line(status(plan), style.BOLD)
     if verdict:
         grid.line(verdict)
@@ -76,7 +76,7 @@ def summary(book: Workbook, estate: Estate, plan: Plan, verdict: str) -> None:
     if plan.bought:
         grid.gap()
         grid.table(BOUGHT, plan.bought, Scope.of(estate))
-    style.fit(grid.sheet, grid.widths)
+    grid.settle()
     style.paper(grid.sheet)
 
 

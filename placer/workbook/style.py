@@ -4,7 +4,8 @@ Colours come from the palette of Okabe and Ito ("Color Universal Design", 2008),
 for colour-blind readers, and never carry a meaning alone.
 """
 
-from collections.abc import Mapping
+from collections.abc import Iterable, Mapping
+from textwrap import wrap
 from typing import cast
 
 from openpyxl.cell.cell import Cell
@@ -28,11 +29,14 @@ _HEADER = Font(name=_FACE, size=10, bold=True, color="FFFFFF")
 _UNDER = Border(bottom=_LINE)
 _HEADER_FILL = PatternFill("solid", fgColor=_BLUE)
 _BAND_FILL = PatternFill("solid", fgColor=_SKY_BLUE)
-_TOP = Alignment(vertical="top")
-RUNNING = _TOP
+_NUMBER = Alignment(vertical="top")
+_TEXT = Alignment(vertical="top", horizontal="left", indent=1)
+RUNNING = _NUMBER
 _OVER_NUMBERS = Alignment(horizontal="right", vertical="top", wrap_text=True)
-_WRAPPED = Alignment(vertical="top", wrap_text=True)
+_WRAPPED = Alignment(vertical="top", horizontal="left", indent=1, wrap_text=True)
 WIDEST = 60
+_LINE_HEIGHT = 13.5
+_TITLE_HEIGHT = 22
 
 
 def at(sheet: Worksheet, row: int, column: int) -> Cell:
@@ -44,7 +48,7 @@ def put(cell: Cell, value: Raw, number_format: str = "General") -> None:
     """Write a value: text never as a formula, a float with every digit it has."""
     cell.font = PLAIN
     cell.number_format = number_format
-    cell.alignment = _WRAPPED if _is_long(value) else _TOP
+    cell.alignment = _alignment(value)
     if isinstance(value, float):
         cell.value = repr(value)
         cell.data_type = "n"
@@ -55,8 +59,10 @@ def put(cell: Cell, value: Raw, number_format: str = "General") -> None:
             cell.quotePrefix = value.startswith(_RISKY)
 
 
-def _is_long(value: Raw) -> bool:
-    return isinstance(value, str) and len(value) > WIDEST
+def _alignment(value: Raw) -> Alignment:
+    if not isinstance(value, str):
+        return _NUMBER
+    return _WRAPPED if len(value) > WIDEST else _TEXT
 
 
 def header(cell: Cell, text: str, number: bool) -> None:
@@ -71,7 +77,13 @@ def band(sheet: Worksheet, row: int, text: str, columns: int) -> None:
     put(at(sheet, row, 1), text)
     for column in range(1, columns + 1):
         cell = sheet.cell(row, column)
-        cell.font, cell.fill, cell.alignment = BOLD, _BAND_FILL, _TOP
+        cell.font, cell.fill, cell.alignment = BOLD, _BAND_FILL, RUNNING
+
+
+def title(sheet: Worksheet, row: int) -> None:
+    """Make a row the title of its sheet."""
+    at(sheet, row, 1).font = TITLE
+    sheet.row_dimensions[row].height = _TITLE_HEIGHT
 
 
 def underline(sheet: Worksheet, row: int, columns: int) -> None:
@@ -80,10 +92,18 @@ def underline(sheet: Worksheet, row: int, columns: int) -> None:
         sheet.cell(row, column).border = _UNDER
 
 
-def fit(sheet: Worksheet, widths: Mapping[int, int]) -> None:
-    """Set the widths of columns, given in characters."""
+def fit(
+    sheet: Worksheet, widths: Mapping[int, int], headers: Iterable[int] = ()
+) -> None:
+    """Set the widths of columns [characters] and the heights of rows of headers."""
     for column, characters in widths.items():
-        sheet.column_dimensions[get_column_letter(column)].width = characters + 2
+        sheet.column_dimensions[get_column_letter(column)].width = characters + 3
+    for row in headers:
+        lines = [
+            len(wrap(str(sheet.cell(row, column).value or ""), characters + 3))
+            for column, characters in widths.items()
+        ]
+        sheet.row_dimensions[row].height = _LINE_HEIGHT * max(lines, default=1)
 
 
 def paper(sheet: Worksheet, titles: int | None = None) -> None:
