@@ -63,7 +63,7 @@ def _agrees(case: Case, move: Move) -> Iterator[str]:
 
 
 def copy_whole(case: Case) -> Iterator[str]:
-    """Check that bookings carry the bytes of their move; it starts and ends with them."""
+    """Check that the bookings of a move carry it, and that it spans them."""
     booked: dict[str, list[Booking]] = {move: [] for move in case.moves}
     for booking in case.plan.bookings:
         if booking.move in booked:
@@ -139,7 +139,7 @@ def window_cutovers(case: Case) -> Iterator[str]:
 
 
 def hold(case: Case) -> Iterator[str]:
-    """Check that sources are kept for their hold, counted from where the window opens."""
+    """Check that a source is kept for its hold, from where the window opens."""
     for move in case.moves.values():
         days = case.volumes[move.volume].hold_days
         for window in case.windows.get(move.window, [])[:1]:
