@@ -6,10 +6,8 @@ from datetime import UTC, date, datetime, time, timedelta, tzinfo
 from dateutil.rrule import rrulestr
 
 from placer.windows.clock import zone_named
+from placer.windows.weekdays import rule_of_words
 
-_DAYS = ("monday", "tuesday", "wednesday", "thursday", "friday", "saturday", "sunday")
-_CODES = ("MO", "TU", "WE", "TH", "FR", "SA", "SU")
-_GROUPS = {"daily": "mon-sun", "weekdays": "mon-fri", "weekends": "sat-sun"}
 _FREQUENCIES = ("DAILY", "WEEKLY", "MONTHLY", "YEARLY")
 _CLOCK_PARTS = {"BYHOUR", "BYMINUTE", "BYSECOND"}
 _DAY_PARTS = {"BYDAY", "BYMONTHDAY", "BYYEARDAY"}
@@ -79,7 +77,7 @@ def counts_from_a_date(opens_on: str) -> bool:
 def _lines(said: str) -> tuple[str, list[str]]:
     """Return the rule and the dated lines beside it, these without their zones."""
     if "=" not in said:
-        return _rule_of_words(said), []
+        return rule_of_words(said), []
     lines = said.upper().split()
     dated = [_DATED.sub(r"\1:\2", line) for line in lines if _DATED.fullmatch(line)]
     rules = [line for line in lines if not _DATED.fullmatch(line)]
@@ -117,17 +115,22 @@ def _check(parts: dict[str, str], said: str) -> None:
 def _check_numbers(parts: dict[str, str], said: str) -> None:
     """Refuse numbers of days, weeks and months that no year has."""
     for part, highest in _HIGHEST.items():
-        for value in parts.get(part, "1").split(","):
-            if (
-                not re.fullmatch(r"[+-]?0*[1-9]\d{0,2}", value)
-                or abs(int(value)) > highest
-            ):
-                raise _wrong(said, f"{part} goes from 1 to {highest}")
-    numbers = [int(number) for number in re.findall(r"\d+", parts.get("BYDAY", ""))]
+        if not _within(parts.get(part, "1"), highest):
+            raise _wrong(said, f"{part} goes from 1 to {highest}")
+    numbers = re.findall(r"\d+", parts.get("BYDAY", ""))
     weeks = _NUMBERED.get(parts["FREQ"], 0)
-    if max(numbers, default=0) > (min(weeks, 5) if "BYMONTH" in parts else weeks):
+    highest = min(weeks, 5) if "BYMONTH" in parts else weeks
+    if numbers and not _within(",".join(numbers), highest):
         sentence = "BYDAY numbers weekdays up to 5 in a month, up to 53 in a year"
         raise _wrong(said, sentence)
+
+
+def _within(values: str, highest: int) -> bool:
+    """Return whether all values are numbers from 1 on, counted from either end."""
+    return all(
+        re.fullmatch(r"[+-]?\d{1,3}", value) and 1 <= abs(int(value)) <= highest
+        for value in values.split(",")
+    )
 
 
 def _day_of(moment: re.Match[str], at: time, zone: tzinfo) -> str:
@@ -137,39 +140,6 @@ def _day_of(moment: re.Match[str], at: time, zone: tzinfo) -> str:
         when = when.replace(tzinfo=UTC).astimezone(zone)
     early = bool(moment[1]) and when.time() < at
     return f"{moment[1] or ''}{when.date() - timedelta(days=early):%Y%m%d}"
-
-
-def _rule_of_words(words: str) -> str:
-    """Return weekday words as an RFC 5545 rule."""
-    text = re.sub(r"\s*[-\u2013]\s*", "-", words.strip().lower())
-    items = [item for item in re.split(r"[\s,;]+|\band\b", text) if item]
-    found = {day for item in items for day in _days(_GROUPS.get(item, item), words)}
-    if not found:
-        raise _no_days(words)
-    return "FREQ=WEEKLY;BYDAY=" + ",".join(_CODES[day] for day in sorted(found))
-
-
-def _days(item: str, words: str) -> list[int]:
-    """Return the weekdays of "mon" or "fri-mon"; 0 is Monday."""
-    start, dash, end = item.partition("-")
-    begin = _weekday(start, words)
-    length = (_weekday(end, words) - begin) % 7 if dash else 0
-    return [(begin + step) % 7 for step in range(length + 1)]
-
-
-def _weekday(name: str, words: str) -> int:
-    """Return the number of a weekday from its name or the first letters of it."""
-    for number, day in enumerate(_DAYS):
-        if len(name) >= 2 and f"{day}s".startswith(name):
-            return number
-    raise _no_days(words)
-
-
-def _no_days(words: str) -> ValueError:
-    return ValueError(
-        f'"{words}" names no days; write Fri, Mon-Thu, "Mon, Wed", daily, weekdays, '
-        "or a rule such as FREQ=WEEKLY;BYDAY=TU"
-    )
 
 
 def _wrong(said: str, why: str) -> ValueError:
