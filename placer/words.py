@@ -26,6 +26,11 @@ def clock(instant: int, zone: str) -> str:
     return local(instant, zone).isoformat(" ", "minutes")
 
 
+def count(number: int, noun: str) -> str:
+    """Return a number with its noun: ``1 move``, ``2 moves``."""
+    return f"{number:,} {noun}" if number == 1 else f"{number:,} {noun}s"
+
+
 def title(goal: Goal) -> str:
     """Return what a goal is called in front of people."""
     return _TITLES.get(goal.name, goal.name)
@@ -71,9 +76,9 @@ def stopped(plan: Plan) -> Stopped:
 def status(plan: Plan) -> str:
     """Say in one sentence whether the plan can be used."""
     if plan.status is Status.NO_PLAN:
-        return f"No plan is possible: {len(plan.shortages)} shortage(s) stand below."
+        return f"No plan is possible: {count(len(plan.shortages), 'shortage')} listed."
     if not plan.moves and not plan.left:
         return "Nothing has to move."
     words = "Proven best" if plan.status is Status.PROVEN else "Within the gap stated"
-    left = f"; {len(plan.left)} move(s) left over" if plan.left else ""
-    return f"{words}: {len(plan.moves)} move(s){left}."
+    left = f"; {count(len(plan.left), 'move')} left over" if plan.left else ""
+    return f"{words}: {count(len(plan.moves), 'move')}{left}."

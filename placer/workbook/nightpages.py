@@ -10,7 +10,7 @@ from placer.plan import Plan
 from placer.tally import Night, Total, nights, totals
 from placer.units import GIB, MILLI
 from placer.windows.clock import local
-from placer.words import CAUTIONS, clock
+from placer.words import CAUTIONS, clock, count
 from placer.workbook import style
 from placer.workbook.cellkinds import (
     MEGABYTES_PER_SECOND,
@@ -111,8 +111,10 @@ def _heading(section: Section, night: Night | None) -> str:
 
 
 def _load(night: Night) -> str:
-    copied = f"{night.copies} copies, {night.carried / GIB:,.0f} GiB"
-    return f"{copied}, {night.cutovers} cutovers"
+    copies = f"{night.copies} {'copy' if night.copies == 1 else 'copies'}"
+    return (
+        f"{copies}, {night.carried / GIB:,.0f} GiB, {count(night.cutovers, 'cutover')}"
+    )
 
 
 def _row(step: Step, section: Section) -> Sequence[Raw]:

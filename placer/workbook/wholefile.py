@@ -61,7 +61,7 @@ def is_untouched(path: Path) -> bool:
     """Return whether a file holds exactly what placer wrote there."""
     try:
         book = load_workbook(path)
-        return book.properties.identifier == _content(book)
+        return str(book.properties.identifier) == _content(book)
     except UNREADABLE:
         return False
 

@@ -52,8 +52,8 @@ def test_money_is_told_in_the_currency() -> None:
 
 
 def test_the_status_says_what_to_make_of_the_plan() -> None:
-    assert status(NO_PLAN).startswith("No plan is possible: 1 shortage")
-    assert status(PLAN) == "Within the gap stated: 2 move(s); 1 move(s) left over."
+    assert status(NO_PLAN).startswith("No plan is possible: 1 shortage listed")
+    assert status(PLAN) == "Within the gap stated: 2 moves; 1 move left over."
     nothing = replace(PLAN, moves=(), left=(), status=Status.PROVEN)
     assert status(nothing) == "Nothing has to move."
 

@@ -1,0 +1,185 @@
+"""What came out, as text for a terminal: the whole on one screen, the verdict last."""
+
+from collections import Counter
+from collections.abc import Iterable, Iterator, Sequence
+from itertools import islice
+
+from placer.estate import Estate, Pool
+from placer.findings import Finding, Severity
+from placer.plan import Moment, Plan, Use
+from placer.report.paragraphs import paragraph, table
+from placer.tally import Total, finish, nights, share_of_limit, shares, totals
+from placer.units import CENTS, MILLI, gib
+from placer.words import clock, count, gap, status, title, value
+
+_LIMITS = (("room", "pool-room"), ("busiest hour", "pool-busy"), ("wear", "pool-wear"))
+_SOME = 4
+_HANGING = "    "
+
+Uses = dict[tuple[str, str, Moment], Use]
+
+
+def plan_text(
+    estate: Estate,
+    plan: Plan,
+    findings: Iterable[Finding] = (),
+    verdict: str = "",
+    width: int = 80,
+) -> str:
+    """Return the summary of a plan; an ordinary one fits 40 lines.
+
+    Parameters
+    ----------
+    estate
+        The inventory the plan was made for.
+    plan
+        The plan, or the shortages where no plan is possible.
+    findings
+        Remarks on the inventory and on the plan; they are only counted here.
+    verdict
+        What the audit said, and where the files are; stands last.
+    width
+        [characters] how long a line may be.
+    """
+    parts = [
+        paragraph(inventory_line(estate, plan.inventory), width),
+        _pools(estate, plan, width),
+        _moves(estate, plan, width),
+        _goals(estate, plan, width),
+        _lacking(plan, width),
+        _trust(estate, findings, width),
+        [
+            *paragraph(status(plan), width),
+            *(line for said in verdict.splitlines() for line in paragraph(said, width)),
+        ],
+    ]
+    return "\n\n".join("\n".join(part) for part in parts if part) + "\n"
+
+
+def inventory_line(estate: Estate, name: str) -> str:
+    """Say what the inventory holds."""
+    total = totals(estate)[-1]
+    return (
+        f"{name}: {count(total.volumes, 'volume')} in "
+        f"{count(len(estate.pools), 'pool')} of {count(len(estate.arrays), 'array')}, "
+        f"{amounts(total)}"
+    )
+
+
+def amounts(total: Total) -> str:
+    """Say how much is stored and asked."""
+    return (
+        f"{gib(total.provisioned):,.0f} GiB provisioned, "
+        f"{gib(total.occupied):,.0f} GiB occupied, "
+        f"{total.requests / MILLI:,.0f} requests/s"
+    )
+
+
+def _pools(estate: Estate, plan: Plan, width: int) -> list[str]:
+    """Return the use of each pool's limits, today and planned."""
+    if not plan.uses:
+        return []
+    uses = {(u.where, u.limit, u.moment): u for u in plan.uses}
+    head = ("% of limit, today -> planned", *(word for word, _ in _LIMITS))
+    return table([head, *(_pool(pool, uses) for pool in estate.pools)], width)
+
+
+def _pool(pool: Pool, uses: Uses) -> Sequence[str]:
+    return (pool.id, *(_change(pool.id, limit, uses) for _, limit in _LIMITS))
+
+
+def _change(where: str, limit: str, uses: Uses) -> str:
+    """Return ``81 -> 93 (Mon 10)``, a dash where the pool has no such limit."""
+    today = uses.get((where, limit, Moment.TODAY))
+    planned = uses.get((where, limit, Moment.PLANNED))
+    if today is None and planned is None:
+        return "-"
+    hour = f" ({planned.hour})" if planned and planned.hour else ""
+    return f"{_share(today)} -> {_share(planned)}{hour}"
+
+
+def _share(use: Use | None) -> str:
+    return "-" if use is None else f"{share_of_limit(use):.0f}"
+
+
+def _moves(estate: Estate, plan: Plan, width: int) -> list[str]:
+    """Return how many moves there are, why, when, and what is bought."""
+    if not plan.moves:
+        return []
+    sums = ", ".join(
+        f"{s.reason or 'no reason'} {s.moves} ({gib(s.copied):,.0f} GiB)"
+        for s in shares(plan)
+    )
+    copied = gib(sum(move.size for move in plan.moves))
+    said = [f"Moves: {len(plan.moves)}, {copied:,.0f} GiB: {sums}", _when(estate, plan)]
+    said += _bought(estate, plan)
+    return [line for text in said for line in paragraph(text, width, rest=_HANGING)]
+
+
+def _when(estate: Estate, plan: Plan) -> str:
+    zone = estate.policy.zone
+    used = [night.window for night in nights(estate, plan)]
+    offered = len({window.night for window in estate.windows})
+    first = clock(used[0].start, used[0].zone) if used else "none"
+    last = clock(finish(plan.moves) or 0, zone)
+    released = clock(max(move.released for move in plan.moves), zone)
+    return (
+        f"Nights: {len({window.night for window in used})} of {offered}, first opens "
+        f"{first}, last cutover {last}, last source released {released}"
+    )
+
+
+def _bought(estate: Estate, plan: Plan) -> list[str]:
+    if not plan.bought:
+        return []
+    policy = estate.policy
+    steps = ", ".join(f"{count(b.steps, 'step')} for {b.pool}" for b in plan.bought)
+    price = sum(b.price for b in plan.bought) / CENTS
+    budget = f"{price:,.2f} of {policy.budget / CENTS:,.2f} {policy.currency}".rstrip()
+    return [f"To buy: {steps}: {budget}"]
+
+
+def _goals(estate: Estate, plan: Plan, width: int) -> list[str]:
+    """Return each goal in the order of solving, with the gap in words."""
+    return [
+        line
+        for goal in plan.goals
+        for line in paragraph(
+            f"{title(goal)}: {value(goal, estate.policy.currency)}, {gap(goal)}",
+            width,
+            rest=_HANGING,
+        )
+    ]
+
+
+def _lacking(plan: Plan, width: int) -> list[str]:
+    """Return what is missing for a plan, and what could not be scheduled."""
+    said = [" ".join((s.sentence, s.remedy)).rstrip() for s in plan.shortages]
+    said += [
+        f"{left.volume} cannot go to {left.target}: {left.lacks}" for left in plan.left
+    ]
+    return list(_some(said, width))
+
+
+def _some(said: Sequence[str], width: int) -> Iterator[str]:
+    for text in islice(said, _SOME):
+        yield from paragraph(text, width, "- ", "  ")
+    if len(said) > _SOME:
+        yield f"  and {len(said) - _SOME} more, in the plan file"
+
+
+def _trust(estate: Estate, findings: Iterable[Finding], width: int) -> list[str]:
+    """Return how much was assumed and remarked."""
+    cells = sum(a.cells for a in estate.assumptions)
+    assumed = f"Assumed: {count(len(estate.assumptions), 'default')} in "
+    assumed += f"{count(cells, 'empty cell')}"
+    return [
+        *paragraph(assumed, width),
+        *paragraph(f"Findings: {counted(findings)}", width),
+    ]
+
+
+def counted(findings: Iterable[Finding]) -> str:
+    """Return how many findings there are of each severity."""
+    counts = Counter(f.severity for f in findings)
+    return ", ".join(count(counts[s], s.value) for s in Severity)
