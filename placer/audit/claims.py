@@ -47,17 +47,22 @@ def goals(case: Case) -> Iterator[str]:
 
 
 def bound(case: Case) -> Iterator[str]:
-    """Check that no goal is better than its bound, nor far from it if called proven."""
+    """Check that no goal passes its bound, and none called proven is far from it."""
     for goal in case.plan.goals:
-        value, best = goal.value, goal.bound
-        better = value - best if goal.name == "relief" else best - value
-        near = CLAIM * max(abs(value), 1)
-        stated = words.figure(value, goal.unit), words.figure(best, goal.unit)
-        if better > near:
-            yield f"{goal.name} is {stated[0]}, better than its bound {stated[1]}"
-        far = -better > near + GAP * abs(value) + _given_up(case, goal)
-        if case.plan.status is Status.PROVEN and far:
-            yield f"{goal.name} is {stated[0]}, could be {stated[1]}: not proven best"
+        sign = -1 if goal.name == "relief" else 1
+        value, reached, best = (
+            sign * part for part in (goal.value, goal.reached, goal.bound)
+        )
+        near = CLAIM * max(abs(reached), 1)
+        stated = words.figure(goal.value, goal.unit)
+        to_be_had = words.figure(goal.bound, goal.unit)
+        if min(value, reached) < best - near:
+            yield f"{goal.name} is {stated}, better than its bound {to_be_had}"
+        if value > reached + near + _given_up(case, goal):
+            found = words.figure(goal.reached, goal.unit)
+            yield f"{goal.name} is {stated}, more was given up of {found} than allowed"
+        if case.plan.status is Status.PROVEN and goal.gap > GAP:
+            yield f"{goal.name} could be {to_be_had}, so nothing is proven best"
 
 
 def _given_up(case: Case, goal: Goal) -> float:
@@ -65,7 +70,7 @@ def _given_up(case: Case, goal: Goal) -> float:
     order = ORDER[case.estate.policy.aim]
     if goal.name != "relief" or order[-1] == "relief":
         return 0.0
-    return abs(goal.bound) * case.estate.policy.relief_given_up / PPM
+    return abs(goal.reached) * case.estate.policy.relief_given_up / PPM
 
 
 def uses(case: Case) -> Iterator[str]:
