@@ -1,15 +1,15 @@
 """What was read and what is wrong with it, as text for a terminal."""
 
 from collections.abc import Iterable, Iterator
+from itertools import groupby
+from typing import Protocol
 
 from placer.estate import Assumption, Estate
 from placer.findings import Finding, Severity, errors, in_order
 from placer.report.paragraphs import paragraph, table
 from placer.report.summary import counted
-from placer.tally import totals
-from placer.units import MILLI, gib
-from placer.words import count
 
+_SUMS = ("sums", "volumes", "provisioned GiB", "occupied GiB", "requests/s", "MB/s")
 _TITLES = {
     Severity.ERROR: "Errors (nothing is planned until they are gone)",
     Severity.WARNING: "Warnings",
@@ -17,8 +17,39 @@ _TITLES = {
 }
 
 
+class Sums(Protocol):
+    """Sums as typed: sizes [GiB], requests [1/s], throughput [MB/s]."""
+
+    @property
+    def what(self) -> str:
+        """Name of the array, or ``all``."""
+
+    @property
+    def volumes(self) -> int:
+        """Number of volumes."""
+
+    @property
+    def provisioned(self) -> float:
+        """Size the hosts see [GiB]."""
+
+    @property
+    def occupied(self) -> float:
+        """What is written [GiB]."""
+
+    @property
+    def requests(self) -> float:
+        """Requests of the busy hours [1/s]."""
+
+    @property
+    def throughput(self) -> float:
+        """Bytes of the busy hours [MB/s]."""
+
+
 def check_text(
-    estate: Estate | None, findings: Iterable[Finding], width: int = 80
+    estate: Estate | None,
+    findings: Iterable[Finding],
+    totals: Iterable[Sums] = (),
+    width: int = 80,
 ) -> str:
     """Return totals, assumptions and findings of an inventory; what to do stands last.
 
@@ -28,48 +59,49 @@ def check_text(
         What was read, None where the errors left nothing to read.
     findings
         Remarks on the inventory.
+    totals
+        What was read, to compare with the spreadsheet's own sums.
     width
         [characters] how long a line may be.
     """
     found = in_order(findings)
-    parts = [] if estate is None else [_totals(estate, width), _assumed(estate, width)]
+    parts = [_totals(totals, width)]
+    parts += [] if estate is None else [_assumed(estate, width)]
     parts += [_group(severity, found, width) for severity in Severity]
     parts += [paragraph(f"{counted(found)}. {_next(found)}", width)]
     return "\n\n".join("\n".join(part) for part in parts if part) + "\n"
 
 
-def _totals(estate: Estate, width: int) -> list[str]:
-    rows = [("array", "volumes", "provisioned GiB", "occupied GiB", "requests/s")]
-    rows += [
+def _totals(totals: Iterable[Sums], width: int) -> list[str]:
+    rows = [
         (
-            total.array or "all",
+            total.what,
             f"{total.volumes:,}",
-            f"{gib(total.provisioned):,.0f}",
-            f"{gib(total.occupied):,.0f}",
-            f"{total.requests / MILLI:,.0f}",
+            f"{total.provisioned:,.0f}",
+            f"{total.occupied:,.0f}",
+            f"{total.requests:,.0f}",
+            f"{total.throughput:,.0f}",
         )
-        for total in totals(estate)
+        for total in totals
     ]
-    return table(rows, width)
+    return table([_SUMS, *rows], width) if rows else []
 
 
 def _assumed(estate: Estate, width: int) -> list[str]:
-    """Return the assumptions in the order of their effect, which is their own order."""
+    """Return the assumptions by their effect, which is the order they come in."""
     if not estate.assumptions:
         return []
-    lines = (
-        line
-        for assumption in estate.assumptions
-        for line in paragraph(_assumption(assumption), width, "  ", "      ")
-    )
-    return ["Assumed where cells are empty", *lines]
+    lines = ["Assumed where cells are empty (in brackets: how many)"]
+    for effect, group in groupby(estate.assumptions, key=lambda a: a.effect):
+        lines += paragraph(f"{effect or 'no effect on the plan'}:", width, "  ", "  ")
+        said = "; ".join(_assumption(assumption) for assumption in group)
+        lines += paragraph(said, width, "      ", "      ")
+    return lines
 
 
 def _assumption(assumption: Assumption) -> str:
-    cells = count(assumption.cells, "cell")
-    effect = f"; {assumption.effect}" if assumption.effect else ""
     named = f"{assumption.sheet}, {assumption.column}"
-    return f"{named} = {assumption.value} ({cells}){effect}"
+    return f"{named} = {assumption.value} ({assumption.cells:,})"
 
 
 def _group(severity: Severity, findings: tuple[Finding, ...], width: int) -> list[str]:
