@@ -30,6 +30,7 @@ class Kind(Enum):
 class Effect(IntEnum):
     """What a wrong default could do to the plan, the gravest first."""
 
+    CALENDAR = 0
     NIGHTS = 1
     ROOM = 2
     BUSY = 3
@@ -47,7 +48,8 @@ class Effect(IntEnum):
 
 
 _SENTENCES = {
-    Effect.NIGHTS: "decides on which nights anything can move",
+    Effect.CALENDAR: "decides on which nights anything can move at all",
+    Effect.NIGHTS: "decides when moves can begin and how many fit a night",
     Effect.ROOM: "decides how much fits into a pool",
     Effect.BUSY: "decides how much load a pool or an array carries",
     Effect.RESPONSE: "decides which volumes gain from a move",

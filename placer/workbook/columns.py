@@ -13,8 +13,9 @@ from placer.workbook.sheets.wishes import (
     WINDOWS,
 )
 
-__all__ = ["SETTINGS", "SHEETS", "sheet"]
+__all__ = ["GUIDE", "SETTINGS", "SHEETS", "sheet"]
 
+GUIDE = "guide"
 SHEETS = (
     VOLUMES,
     POOLS,

@@ -1,0 +1,1 @@
+"""From files to records: raw cells, headings, values, then one module per sheet."""

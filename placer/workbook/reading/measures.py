@@ -1,0 +1,134 @@
+"""Cells that hold a number: as typed, within bounds, or the fault in it."""
+
+import re
+from collections.abc import Callable
+from datetime import date, datetime, time, timedelta
+from decimal import Decimal
+
+from placer.workbook.column import NOT_LIMITED, Column, Kind
+from placer.workbook.reading.numbers import AmbiguousNumberError, number
+from placer.workbook.reading.raw import Cell
+from placer.workbook.reading.scales import own_scale
+from placer.workbook.reading.values import CellFaultError, Quantity
+
+
+def read_quantity(cell: Cell, column: Column, scale: int) -> Quantity:
+    """Return the quantity of a cell that is not blank.
+
+    Parameters
+    ----------
+    scale
+        Small units in one of the unit of the heading.
+
+    Raises
+    ------
+    CellFaultError
+        The cell is no number, an ambiguous one, or out of bounds.
+    """
+    if cell.merged:
+        raise CellFaultError(
+            "merged",
+            f"{column.name} is merged over several cells",
+            "unmerge and say the number of each row",
+        )
+    if cell.text.casefold() == NOT_LIMITED:
+        return Quantity(Decimal(0), scale)
+    quantity = Quantity(MEASURES[column.kind](cell, column), scale)
+    _check_bounds(quantity, cell, column)
+    return quantity
+
+
+def _check_bounds(quantity: Quantity, cell: Cell, column: Column) -> None:
+    own = quantity.number * quantity.scale / own_scale(column)
+    if not column.lowest <= own <= column.highest:
+        unit = f" {column.unit}" if column.unit else ""
+        raise CellFaultError(
+            "bounds",
+            f"{column.name} is {cell.text}: outside {column.lowest} to "
+            f"{column.highest:,}{unit}".replace(",", " "),
+            "check the number and the unit of the heading",
+        )
+
+
+def _number(cell: Cell, column: Column) -> Decimal:
+    if cell.percent:
+        raise CellFaultError(
+            "percent",
+            f"{column.name} is formatted as a percentage",
+            f"write it in {column.unit or 'plain numbers'}",
+        )
+    return _decimal(cell, column)
+
+
+def _decimal(cell: Cell, column: Column) -> Decimal:
+    """Return the number of a cell, exactly as it shows."""
+    value = cell.value
+    if isinstance(value, int | float) and not isinstance(value, bool):
+        return Decimal(repr(value))
+    if not isinstance(value, str):
+        raise _not_a_number(cell, column)
+    try:
+        return number(value)
+    except AmbiguousNumberError:
+        raise CellFaultError(
+            "ambiguous",
+            f'{column.name} is "{cell.text}": a thousands mark or a decimal comma?',
+            "write it without thousands marks and with a decimal point",
+        ) from None
+    except ValueError:
+        raise _not_a_number(cell, column) from None
+
+
+def _not_a_number(cell: Cell, column: Column) -> CellFaultError:
+    unit = f" in {column.unit}" if column.unit else ""
+    if isinstance(cell.value, datetime | date | time | timedelta):
+        return CellFaultError(
+            "cell",
+            f"{column.name} is a date or time ({cell.text}); was it a number or 2:1?",
+            f"format the cell as text or number and write it again{unit}",
+        )
+    return CellFaultError(
+        "cell",
+        f'{column.name} is "{cell.text}", which is no number',
+        f"write only the number{unit}, or leave the cell blank",
+    )
+
+
+def _count(cell: Cell, column: Column) -> Decimal:
+    found = _number(cell, column)
+    if found != found.to_integral_value():
+        raise CellFaultError(
+            "cell", f"{column.name} is {cell.text}, not a whole number", "round it"
+        )
+    return found
+
+
+def _percent(cell: Cell, column: Column) -> Decimal:
+    if cell.percent and not isinstance(cell.value, str):
+        return _decimal(cell, column) * 100
+    if isinstance(cell.value, str) and cell.text.endswith("%"):
+        bare = Cell(cell.text.removesuffix("%"), cell.place)
+        return _decimal(bare, column)
+    found = _decimal(cell, column)
+    if 0 < found <= 1:
+        raise CellFaultError(
+            "percent",
+            f"{column.name} is {cell.text}: {cell.text} % or {found * 100:f} %?",
+            "write the percent sign into the cell, or a number above 1",
+        )
+    return found
+
+
+def _ratio(cell: Cell, column: Column) -> Decimal:
+    text = re.fullmatch(r"(.+):\s*1(?:\.0*)?", cell.text)
+    if isinstance(cell.value, str) and text:
+        return _decimal(Cell(text[1], cell.place), column)
+    return _number(cell, column)
+
+
+MEASURES: dict[Kind, Callable[[Cell, Column], Decimal]] = {
+    Kind.NUMBER: _number,
+    Kind.COUNT: _count,
+    Kind.PERCENT: _percent,
+    Kind.RATIO: _ratio,
+}

@@ -1,0 +1,142 @@
+"""Raw cells from a workbook; says what is hidden, filtered or merged."""
+
+import warnings
+from collections.abc import Iterator
+from itertools import groupby, zip_longest
+from pathlib import Path
+from zipfile import BadZipFile
+
+from openpyxl import Workbook, load_workbook
+from openpyxl.cell.cell import Cell as Source
+from openpyxl.cell.cell import MergedCell
+from openpyxl.utils.exceptions import InvalidFileException
+from openpyxl.worksheet.worksheet import Worksheet
+
+from placer.findings import Place
+from placer.workbook.reading.raw import Cell, RawSheet, Trouble
+from placer.workbook.reading.remarks import Remarks
+
+_COMPOUND_FILE = b"\xd0\xcf\x11\xe0"
+_DAMAGED = (
+    BadZipFile,
+    InvalidFileException,
+    KeyError,
+    ValueError,
+    TypeError,
+    AttributeError,
+    EOFError,
+    SyntaxError,
+)
+
+
+def read_workbook(path: Path, remarks: Remarks) -> tuple[RawSheet, ...]:
+    """Return the sheets of a workbook; none, and a finding, if it cannot be read."""
+    if path.read_bytes()[:4] == _COMPOUND_FILE:
+        remarks.error(
+            "file",
+            Place(),
+            f"{path.name} is protected by a password or of the old .xls kind",
+            "save it as .xlsx without a password",
+        )
+        return ()
+    try:
+        stored, written = _load(path, stored=True), _load(path, stored=False)
+    except _DAMAGED:
+        remarks.error(
+            "file",
+            Place(),
+            f"{path.name} is no whole workbook: it is damaged, cut short or empty",
+            "open it in the spreadsheet program and save it again as .xlsx",
+        )
+        return ()
+    if stored.epoch.year == 1904:
+        remarks.note(
+            "date", Place(), "the workbook counts days from 1904; dates follow it"
+        )
+    return tuple(
+        _sheet(sheet, written[sheet.title], remarks) for sheet in stored.worksheets
+    )
+
+
+def _load(path: Path, *, stored: bool) -> Workbook:
+    """Load the values that formulas had when last saved, or the formulas."""
+    with warnings.catch_warnings():
+        warnings.simplefilter("ignore")
+        return load_workbook(path, data_only=stored)
+
+
+def _sheet(stored: Worksheet, written: Worksheet, remarks: Remarks) -> RawSheet:
+    merged = _merged(stored, remarks)
+    _say_hidden(stored, remarks)
+    rows = tuple(
+        tuple(
+            _cell(cell, formula, merged)
+            for cell, formula in zip_longest(*pair)
+            if isinstance(cell, Source | MergedCell)
+        )
+        for pair in zip(stored.iter_rows(), written.iter_rows(), strict=True)
+    )
+    return RawSheet(stored.title, rows)
+
+
+def _cell(
+    cell: Source | MergedCell,
+    formula: Source | MergedCell,
+    merged: dict[str, Source | MergedCell],
+) -> Cell:
+    source = merged.get(cell.coordinate, cell)
+    value: object = source.value
+    if value is None and formula.data_type == "f":
+        value = Trouble.NO_STORED_VALUE
+    return Cell(
+        value,
+        Place(str(cell.parent.title), cell.coordinate),
+        percent="%" in str(source.number_format),
+        merged=isinstance(cell, MergedCell),
+    )
+
+
+def _merged(sheet: Worksheet, remarks: Remarks) -> dict[str, Source | MergedCell]:
+    """Return for each cell that is merged away the one that holds its value."""
+    holders: dict[str, Source | MergedCell] = {}
+    for area in sheet.merged_cells.ranges:
+        first = sheet.cell(area.min_row, area.min_col)
+        for row, column in area.cells:
+            if (row, column) != (area.min_row, area.min_col):
+                holders[sheet.cell(row, column).coordinate] = first
+        remarks.warn(
+            "merged",
+            Place(sheet.title, area.coord),
+            "cells are merged; words are read for each of them, numbers are refused",
+            "unmerge them and fill in each cell",
+        )
+    return holders
+
+
+def _say_hidden(sheet: Worksheet, remarks: Remarks) -> None:
+    rows = sorted(n for n, row in sheet.row_dimensions.items() if row.hidden)
+    columns = sorted(n for n, it in sheet.column_dimensions.items() if it.hidden)
+    how = "filtered out" if sheet.auto_filter.ref else "hidden"
+    for said, names in ((f"rows {how}", _runs(rows)), ("columns hidden", columns)):
+        if names:
+            remarks.warn(
+                "hidden",
+                Place(sheet.title),
+                f"{said} were read all the same: {', '.join(names)}",
+                "delete what is not part of the inventory",
+            )
+    if sheet.sheet_state != "visible":
+        remarks.warn(
+            "hidden", Place(sheet.title), "the hidden sheet was read all the same"
+        )
+
+
+def _runs(numbers: list[int]) -> list[str]:
+    """Return 1, 2, 3, 7 as "1-3", "7"."""
+    return list(_spoken_runs(numbers))
+
+
+def _spoken_runs(numbers: list[int]) -> Iterator[str]:
+    for _, group in groupby(enumerate(numbers), lambda pair: pair[1] - pair[0]):
+        run = [number for _, number in group]
+        yield str(run[0]) if len(run) == 1 else f"{run[0]}-{run[-1]}"

@@ -1,0 +1,164 @@
+"""Rows of the sheets volumes and classes to volumes with their busy hour."""
+
+from collections.abc import Iterable, Mapping
+from dataclasses import dataclass
+from fractions import Fraction
+
+from placer.estate import Importance, Load, Volume
+from placer.units import MILLI, PPM, demand
+from placer.workbook.reading.names import Names
+from placer.workbook.reading.table import Row
+
+
+@dataclass(frozen=True, slots=True)
+class Sizes:
+    """Mean sizes of a read and a write [B], unrounded."""
+
+    read: Fraction
+    write: Fraction
+
+    def load(self, reads: Fraction, writes: Fraction) -> Load:
+        """Return the load of so many reads and writes [1/1000 s]."""
+        return Load(
+            demand(reads),
+            demand(writes),
+            demand(reads / MILLI * self.read),
+            demand(writes / MILLI * self.write),
+        )
+
+
+@dataclass(frozen=True, slots=True)
+class Measured:
+    """A volume with its busy hour, and the sizes that hold in its other hours."""
+
+    volume: Volume
+    sizes: Sizes
+    row: Row
+
+
+def read_classes(rows: Iterable[Row], names: Names) -> dict[str, Row]:
+    """Return the rows of the classes of service by name."""
+    classes: dict[str, Row] = {}
+    for row in rows:
+        name = row.text("class")
+        if name:
+            names.add(name, row.place("class"))
+            classes.setdefault(name, row)
+    return classes
+
+
+class VolumeReader:
+    """Builds volumes; gathers the names of volumes and checks pools and classes.
+
+    Parameters
+    ----------
+    hold_days
+        [d] hold of the policy, where no class says otherwise.
+    """
+
+    def __init__(
+        self,
+        names: Names,
+        pools: Names,
+        class_names: Names,
+        classes: Mapping[str, Row],
+        hold_days: int,
+    ) -> None:
+        self._names = names
+        self._pools = pools
+        self._class_names = class_names
+        self._classes = classes
+        self._hold_days = hold_days
+
+    def read(self, row: Row) -> Measured:
+        """Return one volume; its load has one entry, the busy hour."""
+        of_class = self._classes.get(row.text("class"))
+        sizes = _sizes(row)
+        reads = row.exact("requests") * row.exact("reads") / PPM
+        volume = Volume(
+            array=row.text("array"),
+            name=row.text("volume"),
+            pool=row.text("pool"),
+            provisioned=row.whole("provisioned"),
+            occupied=row.whole("occupied"),
+            thin=row.switch("thin"),
+            load=(sizes.load(reads, row.exact("requests") - reads),),
+            host=row.text("host"),
+            applications=row.names("application"),
+            service_class=row.text("class"),
+            response_measured=_measured(row),
+            response_limit=_limit(row, of_class),
+            importance=_importance(row, of_class),
+            capacity_growth=row.whole("capacity growth"),
+            load_growth=row.whole("load growth"),
+            stays=row.switch("leave where it is"),
+            hold_days=self._hold(of_class),
+            place=row.place("volume"),
+        )
+        self._check(row, volume)
+        return Measured(volume, sizes, row)
+
+    def _hold(self, of_class: Row | None) -> int:
+        given = of_class is not None and of_class.given("hold")
+        return of_class.whole("hold") if of_class and given else self._hold_days
+
+    def _check(self, row: Row, volume: Volume) -> None:
+        if row.given("array") and row.given("volume"):
+            self._names.add(volume.id, volume.place)
+        if row.given("array") and row.given("pool"):
+            self._pools.check(volume.home, row.place("pool"))
+        if volume.service_class:
+            self._class_names.check(volume.service_class, row.place("class"))
+        if volume.occupied > volume.provisioned and row.given("provisioned"):
+            row.error(
+                "bounds",
+                "occupied",
+                "more is occupied than provisioned",
+                "check both columns and their units",
+            )
+
+
+def _sizes(row: Row) -> Sizes:
+    """Return the sizes given; a blank one is throughput / requests."""
+    requests = row.exact("requests") / MILLI
+    if not requests and row.given("requests") and row.exact("throughput"):
+        row.error(
+            "bounds",
+            "throughput",
+            "there is throughput, but there are no requests",
+            "check both columns",
+        )
+    mean = row.exact("throughput") / requests if requests else Fraction(0)
+    return Sizes(_size(row, "read size", mean), _size(row, "write size", mean))
+
+
+def _size(row: Row, column: str, mean: Fraction) -> Fraction:
+    if row.given(column):
+        return row.exact(column)
+    row.assume(column)
+    return mean
+
+
+def _measured(row: Row) -> int:
+    if not row.given("response measured"):
+        row.assume("response measured")
+    return row.whole("response measured")
+
+
+def _limit(row: Row, of_class: Row | None) -> int:
+    source = _source(row, of_class, "response limit")
+    if source is None:
+        row.assume("response limit")
+        return 0
+    return source.whole("response limit")
+
+
+def _importance(row: Row, of_class: Row | None) -> Importance:
+    source = _source(row, of_class, "importance") or row
+    return Importance(source.text("importance"))
+
+
+def _source(row: Row, of_class: Row | None, column: str) -> Row | None:
+    """Return the row that fills a column: the volume's own, else its class's."""
+    own = (each for each in (row, of_class) if each is not None and each.given(column))
+    return next(own, None)
