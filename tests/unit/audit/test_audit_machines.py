@@ -1,0 +1,198 @@
+"""What drives, pools and controllers carry, against published figures."""
+
+from dataclasses import replace
+from fractions import Fraction
+
+import pytest
+
+from placer.audit import machines
+from placer.estate import Array, Expansion, Media, Pool
+from placer.units import GB, GIB, MB, MILLI, TB
+
+PROTECTIONS = {
+    "mirror": (1, 1, True),
+    "one parity": (4, 1, True),
+    "two parities": (6, 2, True),
+    "none": (1, 0, True),
+}
+
+
+def spinning(data: int = 1, parity: int = 0) -> Pool:
+    """Return drives that position in 1 ms and have no other limit."""
+    return Pool(
+        array="a",
+        name="p",
+        media=Media.SPINNING,
+        drives=1,
+        data=data,
+        parity=parity,
+        seek=1_000,
+        skew=1_000_000,
+    )
+
+
+def share(form: machines.Form | None, *load: int) -> Fraction:
+    """Return the share of one drive that one hour's load takes."""
+    assert form is not None
+    return Fraction(form.of(load)[0], form.unit)
+
+
+# Small writes cost 2, 4 and 6 drive operations: Patterson, Gibson, Katz, "A Case for
+# Redundant Arrays of Inexpensive Disks", SIGMOD 1988, and the same counting for two
+# parities; the totals for 1,000 requests/s are plain arithmetic on the factors.
+@pytest.mark.parametrize(
+    ("protection", "reads", "total"),
+    [
+        ("mirror", 700, 1_300),
+        ("one parity", 700, 1_900),
+        ("two parities", 700, 2_500),
+        ("mirror", 500, 1_500),
+        ("one parity", 500, 2_500),
+        ("two parities", 500, 3_500),
+        ("none", 900, 1_000),
+    ],
+)
+def test_host_requests_become_requests_to_drives(
+    protection: str, reads: int, total: int
+) -> None:
+    data, parity, _ = PROTECTIONS[protection]
+    form = machines.busy_form(spinning(data, parity))
+    busy = share(form, reads * MILLI, (1_000 - reads) * MILLI, 0, 0)
+    assert busy == Fraction(total, 1_000)
+
+
+def test_whole_stripes_write_each_block_and_its_part_of_the_parity() -> None:
+    """Five writes for four blocks: OSTEP, section 38.6."""
+    pool = Pool(
+        array="a", name="p", media=Media.FLASH, data=4, parity=1, in_place=False
+    )
+    assert machines.back_end(pool) == (Fraction(0), Fraction(5, 4))
+
+
+def test_bytes_go_with_the_requests_to_drives() -> None:
+    """One MB/s written in place beside one parity moves four at a 10 MB/s drive."""
+    pool = replace(spinning(4, 1), drive_rate=10 * MB)
+    assert share(machines.busy_form(pool), 0, 0, MB, 0) == Fraction(1, 10)
+    assert share(machines.busy_form(pool), 0, 0, 0, MB) == Fraction(4, 10)
+
+
+# OSTEP, chapter 37: half a turn at 30 / rpm seconds.
+@pytest.mark.parametrize(
+    ("rpm", "milliseconds"),
+    [(5_400, 5.5556), (7_200, 4.1667), (10_000, 3.0), (15_000, 2.0)],
+)
+def test_half_a_turn(rpm: int, milliseconds: float) -> None:
+    pool = replace(spinning(), rpm=rpm)
+    assert float(machines.half_turn(pool)) / 1_000 == pytest.approx(
+        milliseconds, abs=5e-5
+    )
+
+
+def test_flash_adds_reads_writes_and_bytes_over_their_ratings() -> None:
+    """By hand: 100/1000 + 10 x (2/1000 + 2/500) + (2 + 4 x 1)/100 = 0.22, x 1.5."""
+    pool = Pool(
+        array="a",
+        name="p",
+        media=Media.FLASH,
+        drives=1,
+        data=3,
+        parity=1,
+        skew=1_500_000,
+        reads_at_most=1_000 * MILLI,
+        writes_at_most=500 * MILLI,
+        drive_rate=100 * MB,
+    )
+    busy = share(machines.busy_form(pool), 100 * MILLI, 10 * MILLI, 2 * MB, 1 * MB)
+    assert busy == Fraction(33, 100)
+
+
+def test_a_rating_of_zero_leaves_its_term_out() -> None:
+    pool = Pool(array="a", name="p", media=Media.FLASH, drives=1, drive_rate=100 * MB)
+    busy = share(machines.busy_form(pool), MILLI, MILLI, 0, 0)
+    assert busy == 0
+
+
+@pytest.mark.parametrize("media", [Media.MIXED, Media.UNMODELLED])
+def test_media_that_only_give_have_no_busy_share(media: Media) -> None:
+    pool = Pool(array="a", name="p", media=media, drives=8, requests_at_most=1)
+    assert machines.busy_form(pool) is None
+
+
+def test_a_black_box_counts_requests_without_skew_and_grows_with_its_drives() -> None:
+    growing = Expansion(drives=5, price=1, at_most=1)
+    pool = replace(spinning(), requests_at_most=200 * MILLI, expansion=growing)
+    assert share(machines.busy_form(pool), 50 * MILLI, 50 * MILLI, MB, MB) == Fraction(
+        1, 2
+    )
+    assert machines.servers(pool, 1) == 6
+
+
+def test_usable_room_counts_whole_stripes_and_overhead() -> None:
+    """By hand: 11 drives hold two stripes of 4 + 1; 2 x 4 x 1,000 GB x 0.97."""
+    pool = Pool(
+        array="a",
+        name="p",
+        media=Media.SPINNING,
+        drives=11,
+        data=4,
+        parity=1,
+        drive_size=1_000 * GB,
+        expansion=Expansion(drives=4, price=1, at_most=1),
+    )
+    assert machines.usable(pool, 0) == 7_760 * GB
+    assert machines.usable(pool, 1) == 11_640 * GB
+
+
+def test_usable_room_as_given_grows_with_the_drives() -> None:
+    step = Expansion(drives=4, price=1, at_most=1)
+    pool = Pool(
+        array="a", name="p", media=Media.FLASH, drives=8, usable=TB, expansion=step
+    )
+    assert machines.usable(pool, 1) == Fraction(3 * TB, 2)
+
+
+def test_room_is_what_ceiling_and_least_free_both_leave() -> None:
+    pool = Pool(array="a", name="p", media=Media.FLASH, usable=100 * GIB)
+    assert machines.room(pool, 0) == 85 * GIB
+    tight = Pool(
+        array="a",
+        name="p",
+        media=Media.FLASH,
+        usable=100 * GIB,
+        least_free=20 * GIB,
+    )
+    assert machines.room(tight, 0) == 80 * GIB
+
+
+# Terabytes written = drive writes per day x TB x 365 x years, the trade's definition
+# of the rating (in the sense of JEDEC JESD218: host writes).
+@pytest.mark.parametrize(
+    ("dwpd", "size", "rated"), [(1, 3_840, 7_008), (3, 1_600, 8_760)]
+)
+def test_rated_writes_of_one_drive(dwpd: int, size: int, rated: int) -> None:
+    pool = Pool(
+        array="a",
+        name="p",
+        media=Media.FLASH,
+        drives=1,
+        drive_size=size * GB,
+        dwpd=dwpd * 1_000_000,
+        warranty_days=5 * 365,
+    )
+    assert machines.wear_budget(pool, 0) == rated * TB
+
+
+def test_controllers_share_what_the_failures_survived_leave() -> None:
+    """By hand: (300/1000 + 100/500 + 40/100) / (3 - 1) x 1.2 = 0.54."""
+    array = Array(
+        name="a",
+        controllers=3,
+        failures_survived=1,
+        reads_at_most=1_000 * MILLI,
+        writes_at_most=500 * MILLI,
+        controller_rate=100 * MB,
+        uneven=1_200_000,
+    )
+    form = machines.controller_form(array)
+    busy = share(form, 300 * MILLI, 100 * MILLI, 30 * MB, 10 * MB)
+    assert busy == Fraction(54, 100)

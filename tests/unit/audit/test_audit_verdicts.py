@@ -1,0 +1,177 @@
+"""The verdict as a whole: a wear case worked by hand, and what a plan may lack."""
+
+import pytest
+
+from placer.audit import goal_values, judge, judge_placement
+from placer.audit.case import Case
+from placer.audit.limits import Reading, Scene, readings
+from placer.estate import Array, Estate, Hour, Load, Media, Policy, Pool, Route, Volume
+from placer.findings import Finding
+from placer.plan import Placed, Plan, Status
+from placer.units import GB, GIB, MB, MILLI
+
+HOURS = tuple(Hour(None, hour, f"{hour:02}:00") for hour in range(24))
+
+
+def asked(hour: int) -> Load:
+    """Return reads for one hour, heavy writing for three, light for the rest."""
+    if hour == 0:
+        return Load(150_000 * MILLI, 0, 0, 0)
+    return Load(0, 0, 0, (380 if hour < 4 else 63) * MB)
+
+
+DRIVES = Pool(
+    array="a",
+    name="flash",
+    media=Media.FLASH,
+    drives=12,
+    data=5,
+    parity=1,
+    drive_size=3_840 * GB,
+    reduction=2_000_000,
+    skew=1_000_000,
+    read_time=100,
+    reads_at_most=400_000 * MILLI,
+    dwpd=1_000_000,
+    warranty_days=1_825,
+    wear_used=300_000,
+    life_days=1_460,
+    array_overhead=1_000_000,
+)
+ESTATE = Estate(
+    name="e",
+    digest="d",
+    hours=HOURS,
+    volumes=(
+        Volume(
+            array="a",
+            name="v",
+            pool="flash",
+            provisioned=GIB,
+            occupied=GIB,
+            thin=False,
+            load=tuple(asked(hour) for hour in range(24)),
+        ),
+    ),
+    pools=(DRIVES,),
+    arrays=(
+        Array(
+            name="a",
+            reads_at_most=120_000 * MILLI,
+            writes_at_most=120_000 * MILLI,
+            controller_ceiling=1_000_000,
+            uneven=1_000_000,
+        ),
+    ),
+    policy=Policy(start=0, earliest=0),
+)
+STAYING = Plan(
+    inventory="e",
+    digest="d",
+    version="0",
+    status=Status.PROVEN,
+    placements=(Placed(volume="a/v", source="a/flash", target="a/flash"),),
+)
+
+
+def one(code: str) -> Reading:
+    """Return the one reading of a limit today."""
+    case = Case(ESTATE, STAYING)
+    return next(readings(Scene(case, case.today, case.homes, {}), code))
+
+
+def test_wear_counts_the_mean_of_the_day_not_its_peak() -> None:
+    """By hand: 100 MB/s = 8.64 TB/day x 2 / 2 against 84,096 x 0.7 / 1,460 = 40.32."""
+    wear = one("pool-wear")
+    assert float(wear.use) / 1_460 == pytest.approx(8.64)
+    assert float(wear.at_most) / 1_460 == pytest.approx(40.32)
+
+
+def test_drives_are_counted_by_their_rate_not_by_their_response() -> None:
+    """By hand: 150,000 of 12 x 400,000 reads/s = 3.125 %."""
+    busy = one("pool-busy")
+    assert (float(busy.use), busy.hour) == (3.125, 0)
+
+
+def test_the_limit_that_binds_is_named_with_figure_and_hour() -> None:
+    """By hand: 150,000 of the 120,000 requests/s of the controller left, 125 %."""
+    (finding,) = judge_placement(ESTATE, STAYING)
+    assert finding.code == "controller-busy"
+    assert "125 % of at most 100 % in 00:00" in finding.sentence
+
+
+def test_no_plan_is_held_to_trust_alone() -> None:
+    none = Plan(inventory="e", digest="d", version="0", status=Status.NO_PLAN)
+    assert judge(ESTATE, none) == ()
+    other = Plan(inventory="e", digest="", version="0", status=Status.NO_PLAN)
+    assert codes(judge(ESTATE, other)) == {"digest"}
+
+
+def test_a_plan_called_done_must_place_every_volume() -> None:
+    empty = Plan(inventory="e", digest="d", version="0", status=Status.PROVEN)
+    assert "one-place" in codes(judge(ESTATE, empty))
+
+
+def test_goals_come_in_the_order_they_are_solved() -> None:
+    assert list(goal_values(ESTATE, STAYING)) == ["missed", "money", "relief", "effort"]
+    assert set(goal_values(ESTATE, STAYING).values()) == {0}
+
+
+def codes(findings: tuple[Finding, ...]) -> set[str]:
+    """Return the codes of findings."""
+    return {finding.code for finding in findings}
+
+
+# Array names count before site names, the source first.
+@pytest.mark.parametrize(
+    ("routes", "expected"),
+    [
+        ((("here", "there"), ("here", "b"), ("a", "there"), ("a", "b")), ("a", "b")),
+        ((("here", "there"), ("here", "b"), ("a", "there")), ("a", "there")),
+        ((("here", "there"), ("here", "b")), ("here", "b")),
+        ((("here", "there"),), ("here", "there")),
+        ((("there", "here"), ("b", "a")), None),
+    ],
+)
+def test_the_most_exact_route_counts(
+    routes: tuple[tuple[str, str], ...], expected: tuple[str, str] | None
+) -> None:
+    estate = Estate(
+        name="e",
+        digest="d",
+        hours=HOURS,
+        volumes=(),
+        pools=(
+            Pool(array="a", name="p", media=Media.FLASH),
+            Pool(array="b", name="p", media=Media.FLASH),
+        ),
+        arrays=(Array(name="a", site="here"), Array(name="b", site="there")),
+        policy=Policy(start=0, earliest=0),
+        routes=tuple(Route(source=near, target=far) for near, far in routes),
+    )
+    found = Case(estate, STAYING).route("a/p", "b/p")
+    assert (None if found is None else (found.source, found.target)) == expected
+
+
+def test_applications_chain_through_volumes_with_several() -> None:
+    volumes = [
+        Volume(
+            array="a",
+            name=name,
+            pool="p",
+            provisioned=0,
+            occupied=0,
+            thin=False,
+            load=(),
+            applications=applications,
+        )
+        for name, applications in (
+            ("1", ("tickets",)),
+            ("2", ("mail",)),
+            ("3", ("tickets", "books")),
+            ("4", ()),
+            ("5", ("books",)),
+        )
+    ]
+    chains = Case(ESTATE, STAYING).chains(volumes)
+    assert sorted(map(sorted, chains)) == [["a/1", "a/3", "a/5"], ["a/2"], ["a/4"]]
