@@ -31,6 +31,7 @@ class Stopped(StrEnum):
     """Why the search ended."""
 
     DONE = "nothing left to search"
+    NEAR = "near enough or out of time"
     TIME = "time limit"
     INTERRUPT = "interrupted"
 
@@ -58,6 +59,24 @@ class Placed:
     def moves(self) -> bool:
         """Whether the volume changes its pool."""
         return self.source != self.target
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Transfer:
+    """A move before it has a time: what is copied from where to where, and why.
+
+    Transfers of one ``group`` cut over together.  ``worth`` is what the move gains per
+    day it is done earlier [ms/s, weighted], 0 where it gains nothing by itself.
+    """
+
+    id: str
+    volume: str
+    source: str
+    target: str
+    size: int
+    reason: Reason
+    group: int
+    worth: float = 0.0
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

@@ -1,14 +1,16 @@
 """What each column of the placement program means."""
 
-from collections.abc import Iterable, Sequence
+from collections.abc import Iterable
 from dataclasses import dataclass
 from functools import cached_property
 
 import numpy as np
 
 from placer.candidates.block import Floats, Ints
+from placer.candidates.groups import groups
 from placer.candidates.table import Candidates
 from placer.estate import Estate
+from placer.placement import nights
 from placer.placement.items import Items, items
 
 
@@ -25,7 +27,8 @@ class Layout:
     hosts
         (host, array): the host has volumes on the array.
     groups
-        Applications, as sets of rows that cut over together.
+        Applications, as sets of rows that cut over together; none where cutovers are
+        not limited.
     """
 
     items: Items
@@ -119,7 +122,7 @@ class Layout:
             x[self.group_column(i)] = float((places[rows] != home[rows]).any())
 
 
-def layout(candidates: Candidates, groups: Sequence[tuple[int, ...]]) -> Layout:
+def layout(candidates: Candidates) -> Layout:
     """Lay out the columns for the candidates of an estate."""
     estate = candidates.estate
     steps = tuple(
@@ -131,4 +134,8 @@ def layout(candidates: Candidates, groups: Sequence[tuple[int, ...]]) -> Layout:
     hosts = sorted({volume.host for volume in estate.volumes if volume.host})
     limited = [array.name for array in estate.arrays if array.hosts_at_most]
     pairs = tuple((host, array) for array in limited for host in hosts)
-    return Layout(items(candidates), steps, pairs, tuple(groups))
+    limited_cutovers = nights.cutovers(estate) is not None
+    every = range(len(estate.volumes)) if limited_cutovers else ()
+    return Layout(
+        items(candidates), steps, pairs, tuple(groups(estate.volumes, every))
+    )

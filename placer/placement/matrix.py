@@ -39,6 +39,8 @@ class Program:
         (rows,) sides; infinite where open.
     keys
         What each row stands for.
+    choices
+        How many of the first columns are choices; the others follow from them.
     overruns_allowed
         How many of the last columns are not binary but overruns, from 0 up.
     """
@@ -47,6 +49,7 @@ class Program:
     low: Floats
     high: Floats
     keys: tuple[RowKey, ...]
+    choices: int
     overruns_allowed: int = 0
 
     @property
@@ -64,6 +67,7 @@ class Program:
             self.low,
             self.high,
             self.keys,
+            self.choices,
             overruns_allowed=len(rows),
         )
 
@@ -76,6 +80,20 @@ class Program:
             np.append(self.low, -INFINITY),
             np.append(self.high, at_most / scale),
             (*self.keys, key),
+            self.choices,
+        )
+
+    def restricted(self, free: Ints, x: Floats) -> "Program":
+        """Return the program over the free columns, all others held where x has them."""
+        held = x.copy()
+        held[free] = 0.0
+        used = self.matrix @ held
+        return Program(
+            sparse.csr_array(self.matrix[:, free]),
+            self.low - used,
+            self.high - used,
+            self.keys,
+            int((free < self.choices).sum()),
         )
 
     def holds(self, x: Floats, within: float = 1e-7) -> bool:
@@ -94,6 +112,7 @@ class Builder:
     """Collects rows while a program is put together."""
 
     columns: int
+    choices: int
     _keys: list[RowKey] = field(default_factory=list)
     _low: list[float] = field(default_factory=list)
     _high: list[float] = field(default_factory=list)
@@ -128,6 +147,7 @@ class Builder:
             np.array(self._low),
             np.array(self._high),
             tuple(self._keys),
+            self.choices,
         )
 
     def _add(

@@ -5,7 +5,6 @@ from dataclasses import dataclass
 import numpy as np
 
 from placer.candidates.block import Floats, Ints
-from placer.candidates.groups import groups
 from placer.candidates.table import Candidates
 from placer.placement import goals, rows, shortage
 from placer.placement.layout import Layout, layout
@@ -68,8 +67,7 @@ def place(
     homeless = shortage.homeless(candidates)
     if homeless:
         return Nothing(homeless)
-    every = range(len(candidates.volumes))
-    plan = layout(candidates, groups(candidates.volumes, every))
+    plan = layout(candidates)
     program = rows.program(plan)
     start = _staying(plan)
     found = search(program, goals.costs(plan), seconds, start, progress)

@@ -122,7 +122,7 @@ def carried(builder: Builder, layout: Layout) -> None:
 
 def _cutovers(builder: Builder, layout: Layout) -> None:
     most = nights.cutovers(layout.estate)
-    if most is None:
+    if most is None or not layout.groups:
         return
     home = layout.candidates.home
     for number, group in enumerate(layout.groups):
@@ -150,7 +150,7 @@ ROWS: tuple[Callable[[Builder, Layout], None], ...] = (
 
 def program(layout: Layout) -> Program:
     """Return the whole placement program."""
-    builder = Builder(layout.columns)
+    builder = Builder(layout.columns, len(layout.items.places))
     for rows in ROWS:
         rows(builder, layout)
     return builder.build()

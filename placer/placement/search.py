@@ -8,12 +8,15 @@ import numpy as np
 
 from placer.candidates.block import Floats
 from placer.placement import solver
+from placer.placement.chain import Chain, worthwhile
 from placer.placement.goals import Cost
 from placer.placement.matrix import Program, RowKey
 from placer.plan import Goal, Stopped
 
-TARGET_GAP = 1e-5
+NEAR_ENOUGH = 2e-4
+PROVEN = 1e-6
 ROUNDING = 1e-9
+CHAIN_SHARE = 0.4
 
 Progress = Callable[[Goal], None]
 
@@ -58,7 +61,7 @@ def search(
     goals: list[Goal] = []
     for number, cost in enumerate(costs):
         share = (deadline - time.monotonic()) / (len(costs) - number)
-        answer = _one(program, cost, max(share, 1.0), x)
+        answer = OneGoal(program, cost, max(share, 1.0)).solve(x)
         if answer.x is None:
             return Found(None, tuple(goals), program, answer.impossible)
         x = answer.x
@@ -69,53 +72,98 @@ def search(
     return Found(x, tuple(goals), program)
 
 
-def _one(
-    program: Program, cost: Cost, seconds: float, start: Floats | None
-) -> solver.Answer:
-    """Solve one goal; a start that meets the relaxation's bound needs no search."""
-    relaxed = solver.relax(program, cost.vector)
-    if relaxed is None:
-        return solver.Answer(None, -np.inf, proven=True, impossible=True)
-    bound = relaxed.value
-    if start is not None and _meets(cost.vector @ start, bound):
-        return solver.Answer(start, cost.vector @ start, True, False)
-    answer = solver.solve(
-        program, cost.vector, seconds=seconds, hint=start, gap=TARGET_GAP
-    )
-    return _better(program, cost, answer, start, bound)
+class OneGoal:
+    """The search for one goal: relaxation, first solution, chain, exact finish."""
 
+    def __init__(self, program: Program, cost: Cost, seconds: float) -> None:
+        self._program, self._cost, self._seconds = program, cost.vector, seconds
+        self._begin = time.monotonic()
 
-def _better(
-    program: Program,
-    cost: Cost,
-    answer: solver.Answer,
-    start: Floats | None,
-    bound: float,
-) -> solver.Answer:
-    """Keep the better of the solver's solution and the start, and the higher bound."""
-    known = [x for x in (answer.x, start) if x is not None and program.holds(x)]
-    best = min(known, key=lambda x: float(cost.vector @ x), default=None)
-    bound = max(bound, answer.bound)
-    if best is not None:
-        bound = min(bound, float(cost.vector @ best))
-    return solver.Answer(best, bound, answer.proven, answer.impossible)
+    def solve(self, start: Floats | None) -> solver.Answer:
+        """Return the best solution and the highest bound found in the time."""
+        relaxed = solver.relax(self._program, self._cost)
+        if relaxed is None:
+            return solver.Answer(None, -np.inf, proven=True, impossible=True)
+        best = self._joined(solver.Answer(start, relaxed.value, False, False))
+        if self._far(best, PROVEN):
+            best = self._joined(self._chained(relaxed, best), best)
+        if best.x is None:
+            return self._joined(self._whole(), best)
+        if self._far(best, NEAR_ENOUGH):
+            best = self._joined(self._finish(relaxed, best), best)
+        return best
 
+    def _chained(self, relaxed: solver.Relaxed, best: solver.Answer) -> solver.Answer:
+        """Go from the relaxation to a first solution, then better the best known."""
+        chain = Chain(self._program, self._cost, relaxed, np.random.default_rng(1))
+        deadline = time.monotonic() + CHAIN_SHARE * self._left()
+        first = chain.begin(deadline)
+        better = self._joined(replace(best, x=first), best)
+        if better.x is None:
+            return better
+        target = best.bound + NEAR_ENOUGH / 2 * abs(best.bound)
+        return replace(better, x=chain.improve(better.x, deadline, target))
 
-def _meets(value: float, bound: float) -> bool:
-    return value <= bound + ROUNDING * max(1.0, abs(bound))
+    def _whole(self) -> solver.Answer:
+        """Give the whole program to the solver: no solution is known."""
+        seconds = max(1.0, self._left())
+        return solver.solve(
+            self._program, self._cost, seconds=seconds, gap=NEAR_ENOUGH
+        )
+
+    def _finish(self, relaxed: solver.Relaxed, best: solver.Answer) -> solver.Answer:
+        """Solve over the columns that can still be part of something better."""
+        assert best.x is not None
+        free = worthwhile(relaxed, float(self._cost @ best.x), best.x)
+        small = self._program.restricted(free, best.x)
+        seconds = max(1.0, self._left())
+        answer = solver.solve(
+            small, self._cost[free], seconds=seconds, hint=best.x[free], gap=NEAR_ENOUGH
+        )
+        if answer.x is None:
+            return replace(answer, impossible=False)
+        whole = np.zeros(self._program.columns)
+        whole[free] = answer.x
+        return replace(answer, x=whole)
+
+    def _joined(self, *answers: solver.Answer) -> solver.Answer:
+        """Keep the best solution that holds and the highest bound of all answers."""
+        known = [
+            a.x for a in answers if a.x is not None and self._program.holds(a.x)
+        ]
+        best = min(known, key=lambda x: float(self._cost @ x), default=None)
+        bound = max(answer.bound for answer in answers)
+        if best is not None:
+            bound = min(bound, float(self._cost @ best))
+        return solver.Answer(
+            best,
+            bound,
+            any(answer.proven for answer in answers),
+            any(answer.impossible for answer in answers),
+        )
+
+    def _far(self, answer: solver.Answer, gap: float) -> bool:
+        if answer.x is None:
+            return True
+        value = float(self._cost @ answer.x)
+        return value - answer.bound > max(gap * abs(value), ROUNDING)
+
+    def _left(self) -> float:
+        return self._seconds - (time.monotonic() - self._begin)
 
 
 def _goal(cost: Cost, answer: solver.Answer) -> Goal:
     assert answer.x is not None
-    reached = _stated(cost, float(cost.vector @ answer.x))
-    done = answer.proven or _meets(float(cost.vector @ answer.x), answer.bound)
+    value = float(cost.vector @ answer.x)
+    reached = _stated(cost, value)
+    done = value - answer.bound <= max(PROVEN * abs(value), ROUNDING)
     return Goal(
         name=cost.name,
         value=reached,
         reached=reached,
         bound=_stated(cost, float(answer.bound)),
         unit=cost.unit,
-        stopped=Stopped.DONE if done else Stopped.TIME,
+        stopped=Stopped.DONE if done else Stopped.NEAR,
     )
 
 
