@@ -4,6 +4,7 @@ All names and figures are made up; the sizes are those of a middling company (co
 practice, no source).
 """
 
+from csv import DictReader
 from dataclasses import dataclass
 
 # Share of the busy hour in each hour of the day, from midnight on.
@@ -25,7 +26,7 @@ SHAPES: dict[str, tuple[int, ...]] = {
 
 @dataclass(frozen=True)
 class Family:
-    """Volumes of one kind: ranges are [GiB] and [1/s], shares [%], requests [KiB]."""
+    """Volumes of one kind: size [GiB], requests [1/s], shares [%], ``kib`` a request."""
 
     prefix: str
     count: int
@@ -38,51 +39,87 @@ class Family:
     requests: tuple[int, int]
     reads: int
     kib: int
-    shape: str = ""
-    growth: int = 10
+    shape: str
+    growth: int
 
 
-FAMILIES = (
-    # quay/fast: the young flash, half of it lent to what never asked for speed
-    Family("tk-db", 4, "quay/fast", "tickets", 2, "counter", (400, 600), 80, (500, 900), 70, 12, "gates"),
-    Family("bk-web", 4, "quay/fast", "booking", 4, "counter", (200, 300), 60, (200, 400), 85, 16, "day"),
-    Family("bk-log", 3, "quay/fast", "booking", 3, "counter", (150, 250), 70, (90, 140), 5, 16, "day"),
-    Family("mx", 6, "quay/fast", "mail", 2, "office", (600, 800), 80, (60, 100), 60, 24, "day"),
-    Family("ts-a", 5, "quay/fast", "test copies A", 1, "archive", (500, 800), 85, (5, 15), 60, 32),
-    Family("ts-b", 5, "quay/fast", "test copies B", 1, "archive", (500, 800), 85, (5, 15), 60, 32),
-    Family("fs", 6, "quay/fast", "", 2, "office", (700, 1000), 80, (8, 25), 80, 48, "day", 15),
-    # quay/bulk: wide and slow, with the booking databases in it for want of room
-    Family("bk-db", 6, "quay/bulk", "booking", 3, "counter", (400, 650), 85, (45, 75), 75, 8, "day"),
-    Family("man-db", 4, "quay/bulk", "manifests", 2, "deck", (250, 450), 80, (25, 42), 70, 8, "day"),
-    Family("cam", 9, "quay/bulk", "cameras", 3, "archive", (1800, 2500), 90, (11, 17), 15, 256),
-    Family("bak", 5, "quay/bulk", "", 1, "archive", (2000, 2600), 80, (8, 14), 20, 256, "night"),
-    # depot/swift: small flash inland
-    Family("pay-db", 3, "depot/swift", "payroll", 1, "office", (200, 400), 75, (150, 300), 65, 8, "day"),
-    Family("st-db", 4, "depot/swift", "stores", 2, "deck", (300, 500), 75, (120, 220), 70, 8, "day"),
-    Family("ts-c", 4, "depot/swift", "test copies C", 1, "archive", (300, 440), 85, (5, 15), 60, 32),
-    Family("rp-web", 3, "depot/swift", "reports", 2, "office", (300, 500), 60, (80, 160), 90, 24, "day"),
-    # depot/deep: the inland archive, and rosters that grew up there
-    Family("arc", 12, "depot/deep", "", 2, "archive", (1300, 2200), 85, (1, 4), 70, 64),
-    Family("buoy", 5, "depot/deep", "", 1, "office", (80, 160), 70, (4, 9), 40, 16),
-    Family("wx", 4, "depot/deep", "weather feeds", 1, "deck", (100, 200), 70, (22, 40), 50, 16),
-    Family("cr-db", 4, "depot/deep", "crew rosters", 2, "deck", (200, 400), 75, (35, 60), 75, 8, "gates"),
-    Family("rp-db", 6, "depot/deep", "reports", 2, "office", (400, 700), 75, (12, 25), 85, 64, "night"),
-    # old-pier/mast: fast-turning mirrors of the old array
-    Family("gate-db", 6, "old-pier/mast", "ticket gates", 2, "counter", (200, 350), 75, (90, 150), 65, 8, "gates"),
-    Family("lg", 8, "old-pier/mast", "", 2, "deck", (220, 320), 85, (25, 45), 10, 16),
-    Family("mir", 2, "old-pier/mast", "tide tables", 2, "deck", (300, 400), 80, (60, 90), 75, 8, "gates"),
-    # old-pier/hold: full beyond its ceiling
-    Family("scan", 10, "old-pier/hold", "", 2, "office", (480, 680), 90, (4, 9), 85, 64, "day"),
-    Family("doc", 8, "old-pier/hold", "paper archive", 1, "archive", (480, 680), 90, (3, 8), 80, 48),
-    Family("lost", 5, "old-pier/hold", "lost property", 1, "office", (60, 120), 75, (2, 6), 85, 24, "day"),
-)  # fmt: skip
+_TABLE = """\
+prefix,count,pool,application,hosts,service,size,filled,requests,reads,kib,shape,growth
+tk-db,4,quay/fast,tickets,2,counter,400-600,80,500-900,70,12,gates,10
+bk-web,4,quay/fast,booking,4,counter,200-300,60,200-400,85,16,day,10
+bk-log,3,quay/fast,booking,3,counter,150-250,70,90-140,5,16,day,10
+mx,6,quay/fast,mail,2,office,600-800,80,60-100,60,24,day,10
+ts-a,5,quay/fast,test copies A,1,archive,500-800,85,5-15,60,32,,10
+ts-b,5,quay/fast,test copies B,1,archive,500-800,85,5-15,60,32,,10
+fs,6,quay/fast,,2,office,700-1000,80,8-25,80,48,day,15
+bk-db,6,quay/bulk,booking,3,counter,400-650,85,45-75,75,8,day,10
+man-db,4,quay/bulk,manifests,2,deck,250-450,80,25-42,70,8,day,10
+cam,9,quay/bulk,cameras,3,archive,1800-2500,90,11-17,15,256,,10
+bak,5,quay/bulk,,1,archive,2000-2600,80,8-14,20,256,night,10
+pay-db,3,depot/swift,payroll,1,office,200-400,75,150-300,65,8,day,10
+st-db,4,depot/swift,stores,2,deck,300-500,75,120-220,70,8,day,10
+ts-c,4,depot/swift,test copies C,1,archive,300-440,85,5-15,60,32,,10
+rp-web,3,depot/swift,reports,2,office,300-500,60,80-160,90,24,day,10
+arc,12,depot/deep,,2,archive,1300-2200,85,1-4,70,64,,10
+buoy,5,depot/deep,,1,office,80-160,70,4-9,40,16,,10
+wx,4,depot/deep,weather feeds,1,deck,100-200,70,22-40,50,16,,10
+cr-db,4,depot/deep,crew rosters,2,deck,200-400,75,35-60,75,8,gates,10
+rp-db,6,depot/deep,reports,2,office,400-700,75,12-25,85,64,night,10
+gate-db,6,old-pier/mast,ticket gates,2,counter,200-350,75,90-150,65,8,gates,10
+lg,8,old-pier/mast,,2,deck,220-320,85,25-45,10,16,,10
+mir,2,old-pier/mast,tide tables,2,deck,300-400,80,60-90,75,8,gates,10
+draw,1,old-pier/hold,drawings,1,office,2400-2400,92,6-6,80,64,day,10
+scan,7,old-pier/hold,,2,office,480-680,90,4-9,85,64,day,10
+doc,7,old-pier/hold,paper archive,1,archive,480-680,90,3-8,80,48,,10
+lost,5,old-pier/hold,lost property,1,office,60-120,75,2-6,85,24,day,10
+"""
+
+
+def _family(row: dict[str, str]) -> Family:
+    def span(name: str) -> tuple[int, int]:
+        low, high = row[name].split("-")
+        return int(low), int(high)
+
+    return Family(
+        prefix=row["prefix"],
+        count=int(row["count"]),
+        pool=row["pool"],
+        application=row["application"],
+        hosts=int(row["hosts"]),
+        service=row["service"],
+        size=span("size"),
+        filled=int(row["filled"]),
+        requests=span("requests"),
+        reads=int(row["reads"]),
+        kib=int(row["kib"]),
+        shape=row["shape"],
+        growth=int(row["growth"]),
+    )
+
+
+FAMILIES = tuple(map(_family, DictReader(_TABLE.splitlines())))
 
 CLASSES: tuple[dict[str, object], ...] = (
-    {"class": "counter", "response limit (ms)": 3, "importance": "vital", "hold (days)": 14},
-    {"class": "deck", "response limit (ms)": 8, "importance": "high", "hold (days)": 7},
-    {"class": "office", "response limit (ms)": 20, "importance": "normal", "hold (days)": 7},
+    {
+        "class": "counter",
+        "response limit (ms)": 3,
+        "importance": "vital",
+        "hold (days)": 14,
+    },
+    {
+        "class": "deck",
+        "response limit (ms)": 20,
+        "importance": "high",
+        "hold (days)": 7,
+    },
+    {
+        "class": "office",
+        "response limit (ms)": 30,
+        "importance": "normal",
+        "hold (days)": 7,
+    },
     {"class": "archive", "importance": "low", "hold (days)": 3},
-)  # fmt: skip
+)
 
 ARRAYS: tuple[dict[str, object], ...] = (
     {
@@ -120,11 +157,11 @@ ARRAYS: tuple[dict[str, object], ...] = (
         "writes at most (1/s per controller)": 2_200,
         "MB/s per controller": 400,
         "write answer (us)": 900,
-        "one copy at most (MB/s)": 100,
+        "one copy at most (MB/s)": 50,
         "all copies in together (MB/s)": 150,
-        "all copies out together (MB/s)": 250,
+        "all copies out together (MB/s)": 150,
         "copies at once": 3,
-        "largest volume (GiB)": 2_000,
+        "largest volume (GiB)": 2_500,
     },
 )
 
@@ -158,8 +195,8 @@ POOLS: tuple[dict[str, object], ...] = (
         "pool": "fast",
         "array": "quay",
         "drives without spares": 12,
-        "drive writes per day": 0.8,
-        "wear used (%)": 35,
+        "drive writes per day": 0.5,
+        "wear used (%)": 88,
         "drives per step": 6,
         "price per step": 48_000,
         "steps at most": 2,
@@ -179,8 +216,8 @@ POOLS: tuple[dict[str, object], ...] = (
         "array": "depot",
         "drives without spares": 6,
         "drive size (GB)": 960,
-        "drive writes per day": 0.8,
-        "wear used (%)": 45,
+        "drive writes per day": 0.5,
+        "wear used (%)": 84,
         "drives per step": 6,
         "price per step": 45_000,
         "steps at most": 1,
@@ -254,6 +291,12 @@ RULES: tuple[dict[str, object], ...] = (
         "rule": "never on",
         "where": "media flash",
         "why": "pictures are written once",
+    },
+    {
+        "what": "application drawings",
+        "rule": "never on",
+        "where": "array old-pier",
+        "why": "the old array goes back next year, the drawings leave first",
     },
 )
 

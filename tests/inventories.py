@@ -11,6 +11,7 @@ from random import Random
 
 import ferry
 from ferry import FAMILIES, SHAPES, Family
+from messy import plant
 from openpyxl import Workbook
 from openpyxl.styles import Font
 from openpyxl.utils import get_column_letter
@@ -136,9 +137,9 @@ def short() -> Sheets:
     """Return the same estate asked for what it cannot give: room, hours and money."""
     sheets = deepcopy(harbour())
     for row in sheets["volumes"]:
-        row["capacity growth (%/year)"] = 45
-        row["load growth (%/year)"] = 40
-    policy = {"growth horizon (months)": 24, "budget": 0}
+        row["capacity growth (%/year)"] = 80
+        row["load growth (%/year)"] = 60
+    policy = {"growth horizon (months)": 24, "budget": 0, "time limit (s)": 15}
     for row in sheets["policy"]:
         row["value"] = policy.get(str(row["setting"]), row["value"])
     cameras = next(r for r in sheets["rules"] if r["what"] == "application cameras")
@@ -179,13 +180,22 @@ def _headers(rows: Sequence[Row]) -> list[str]:
     return list(dict.fromkeys(name for row in rows for name in row))
 
 
+def messy() -> tuple[Workbook, list[tuple[str, str, str]]]:
+    """Return the harbour with its faults, and sheet, cell and code of each."""
+    book = workbook(harbour())
+    return book, plant(book)
+
+
 def main(folder: Path) -> None:
     """Write all demonstration inventories into a folder."""
     folder.mkdir(parents=True, exist_ok=True)
     makers = {"harbour": harbour, "harbour-short": short, "harbour-least": least}
     for name, make in makers.items():
         workbook(make()).save(folder / f"{name}.xlsx")
+    messy()[0].save(folder / "harbour-messy.xlsx")
 
+
+PLANTED = messy()[1]
 
 if __name__ == "__main__":
     main(Path(sys.argv[1] if len(sys.argv) > 1 else "inventories"))
