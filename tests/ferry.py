@@ -26,7 +26,7 @@ SHAPES: dict[str, tuple[int, ...]] = {
 
 @dataclass(frozen=True)
 class Family:
-    """Volumes of one kind: size [GiB], requests [1/s], shares [%], ``kib`` a request."""
+    """Volumes of one kind: size [GiB], requests [1/s], shares [%], ``kib`` each."""
 
     prefix: str
     count: int

@@ -1,10 +1,11 @@
 """Files that appear whole, and never over the work of somebody else's hands."""
 
 import os
-from collections.abc import Iterator
+from collections.abc import Callable, Iterator
 from hashlib import sha256
 from itertools import count
 from pathlib import Path
+from typing import BinaryIO
 from zipfile import BadZipFile
 
 from openpyxl import load_workbook
@@ -32,17 +33,28 @@ def save(book: Workbook, path: Path) -> Path:
     used = next(p for p in _names(path) if not p.exists() or is_untouched(p))
     _refuse_open(used)
     book.properties.identifier = _content(book)
-    used.parent.mkdir(parents=True, exist_ok=True)
-    part = used.with_name(f".{used.stem}.{os.getpid()}.part")
+    _appear(used, book.save)
+    return used
+
+
+def save_text(text: str, path: Path) -> Path:
+    """Write a text file in one step and return its path."""
+    _appear(path, lambda file: file.write(text.encode()))
+    return path
+
+
+def _appear(path: Path, write: Callable[[BinaryIO], object]) -> None:
+    """Write a file beside, make sure of it, and put it in its place whole."""
+    path.parent.mkdir(parents=True, exist_ok=True)
+    part = path.with_name(f".{path.stem}.{os.getpid()}.part")
     try:
         with part.open("wb") as file:
-            book.save(file)
+            write(file)
             file.flush()
             os.fsync(file.fileno())
-        part.replace(used)
+        part.replace(path)
     finally:
         part.unlink(missing_ok=True)
-    return used
 
 
 def _names(path: Path) -> Iterator[Path]:

@@ -8,7 +8,7 @@ from openpyxl.workbook import Workbook
 from smallplan import ESTATE, FINDINGS, NO_PLAN, PLAN
 
 from placer.workbook.planbook import build, read, write
-from placer.workbook.wholefile import FileOpenError, is_untouched, save
+from placer.workbook.wholefile import FileOpenError, is_untouched, save, save_text
 
 
 @pytest.fixture
@@ -73,3 +73,8 @@ def test_a_failed_write_leaves_the_old_file_and_no_other(
 def test_a_missing_folder_is_made(tmp_path: Path) -> None:
     path = tmp_path / "output" / "x-plan.xlsx"
     assert save(build(ESTATE, PLAN), path).exists()
+
+
+def test_a_text_comes_back_with_its_line_ends(tmp_path: Path) -> None:
+    path = save_text("a\nb\N{RIGHTWARDS ARROW}\n", tmp_path / "x.json")
+    assert path.read_bytes() == b"a\nb\xe2\x86\x92\n"
