@@ -37,10 +37,11 @@ class Stopped(StrEnum):
 
 
 class Moment(StrEnum):
-    """When a use of a limit is stated."""
+    """When a use of a limit is stated; "nearest" belongs to a shortage."""
 
     TODAY = "today"
     PLANNED = "planned"
+    NEAREST = "nearest"
 
 
 @dataclass(frozen=True, slots=True, kw_only=True)

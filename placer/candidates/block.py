@@ -57,7 +57,7 @@ class Block:
     @property
     def hours(self) -> int:
         """Number of hours the block looks at."""
-        return self.asks.shape[1]
+        return int(self.asks.shape[1])
 
     def column(self, volume: int, pool: int) -> Floats:
         """Return the use of one volume in one pool, (hours,)."""

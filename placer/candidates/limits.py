@@ -105,9 +105,7 @@ def pool_busy(date: Date) -> Block:
         [pool for pool in date.estate.pools if drives.busy_cost(pool)],
         date.loads,
         _busy_factors,
-        lambda pool, steps: (
-            pool.busy_ceiling / PPM * drives.busy_drives(pool, steps)
-        ),
+        lambda pool, steps: pool.busy_ceiling / PPM * drives.busy_drives(pool, steps),
         unit="drives",
     )
 

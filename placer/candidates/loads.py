@@ -22,7 +22,8 @@ def loads(estate: Estate, months: int) -> Floats:
     rows = [_one(volume.load) for volume in estate.volumes]
     today = np.stack(rows) if rows else np.zeros((0, len(estate.hours), 4))
     factors = [float(growth_factor(v.load_growth, months)) for v in estate.volumes]
-    return today * np.array(factors).reshape(-1, 1, 1)
+    grown: Floats = today * np.array(factors).reshape(-1, 1, 1)
+    return grown
 
 
 def _one(load: tuple[Load, ...]) -> Floats:

@@ -102,7 +102,10 @@ def candidates(estate: Estate) -> Candidates:
 def _promised(estate: Estate, responses: worth.Responses) -> Ints:
     table = np.array(
         [
-            [worth.promised(responses, v, p, pool) for p, pool in enumerate(estate.pools)]
+            [
+                worth.promised(responses, v, p, pool)
+                for p, pool in enumerate(estate.pools)
+            ]
             for v in range(len(estate.volumes))
         ],
         dtype=np.int64,

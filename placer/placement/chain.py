@@ -1,14 +1,15 @@
 """Good solutions from small programs near the relaxation's ties.
 
-A column's reduced cost tells what using it costs at the relaxation's prices.  Few columns
-have a small one, and programs over just those are solved in a moment.
+A column's reduced cost tells what using it costs at the relaxation's prices.  Few
+columns have a small one, and programs over just those are solved in a moment.
 
 References
 ----------
 .. [1] P. Shaw, "Using constraint programming and local search methods to solve vehicle
    routing problems", CP 1998: large neighbourhood search.
-.. [2] G. Dantzig, R. Fulkerson, S. Johnson, "Solution of a large-scale travelling-salesman
-   problem", Operations Research 2, 1954: leaving out columns by reduced costs.
+.. [2] G. Dantzig, R. Fulkerson, S. Johnson, "Solution of a large-scale
+   travelling-salesman problem", Operations Research 2, 1954: leaving out columns by
+   reduced costs.
 """
 
 import time
@@ -80,8 +81,10 @@ class Chain:
         tried[free] = answer.x
         return tried if self.program.holds(tried) else None
 
-    def _opened(self, used: np.ndarray[tuple[int], np.dtype[np.bool_]], luck: Floats) -> Ints:
-        """Open the used columns, all that follow, and the nearest choices, with luck."""
+    def _opened(
+        self, used: np.ndarray[tuple[int], np.dtype[np.bool_]], luck: Floats
+    ) -> Ints:
+        """Open what is used, all that follows, and the nearest choices, with luck."""
         reduced = np.abs(self.relaxed.reduced)
         floor = max(float(np.quantile(reduced, 0.1)), 1e-9)
         nearness = (np.log(reduced + floor) - luck)[: self.program.choices]

@@ -51,7 +51,7 @@ class Items:
 def items(candidates: Candidates) -> Items:
     """Merge volumes that a rule places together in one pool."""
     row = {volume.id: i for i, volume in enumerate(candidates.volumes)}
-    graph = nx.Graph()
+    graph: nx.Graph[int] = nx.Graph()
     graph.add_nodes_from(range(len(candidates.volumes)))
     for group in pooled(candidates.estate):
         nx.add_path(graph, [row[volume] for volume in group])

@@ -136,6 +136,4 @@ def layout(candidates: Candidates) -> Layout:
     pairs = tuple((host, array) for array in limited for host in hosts)
     limited_cutovers = nights.cutovers(estate) is not None
     every = range(len(estate.volumes)) if limited_cutovers else ()
-    return Layout(
-        items(candidates), steps, pairs, tuple(groups(estate.volumes, every))
-    )
+    return Layout(items(candidates), steps, pairs, tuple(groups(estate.volumes, every)))

@@ -58,7 +58,7 @@ class Program:
         return int(self.matrix.shape[1])
 
     def elastic(self, rows: Ints) -> "Program":
-        """Return the program in which the given rows may be overrun, at a column each."""
+        """Return the program in which each given row may be overrun, by its column."""
         shape = (len(self.keys), len(rows))
         entries = (-np.ones(len(rows)), (rows, np.arange(len(rows))))
         slack = sparse.coo_array(entries, shape=shape)
@@ -84,7 +84,7 @@ class Program:
         )
 
     def restricted(self, free: Ints, x: Floats) -> "Program":
-        """Return the program over the free columns, all others held where x has them."""
+        """Return the program over the free columns, the others held as x has them."""
         held = x.copy()
         held[free] = 0.0
         used = self.matrix @ held
@@ -141,9 +141,11 @@ class Builder:
     def build(self) -> Program:
         """Return the program with the rows so far."""
         shape = (len(self._keys), self.columns)
-        entries = (_joined(self._values), (_joined(self._rows), _joined(self._cols)))
+        values = np.concatenate([np.zeros(0), *self._values])
+        rows = np.concatenate([np.zeros(0, dtype=np.int64), *self._rows])
+        cols = np.concatenate([np.zeros(0, dtype=np.int64), *self._cols])
         return Program(
-            sparse.csr_array(sparse.coo_array(entries, shape=shape)),
+            sparse.csr_array(sparse.coo_array((values, (rows, cols)), shape=shape)),
             np.array(self._low),
             np.array(self._high),
             tuple(self._keys),
@@ -151,16 +153,17 @@ class Builder:
         )
 
     def _add(
-        self, key: RowKey, columns: Sequence[int], values: Floats, low: float, high: float
+        self,
+        key: RowKey,
+        columns: Sequence[int],
+        values: Floats,
+        low: float,
+        high: float,
     ) -> None:
         row = len(self._keys)
         self._keys.append(key)
         self._low.append(low)
         self._high.append(high)
         self._rows.append(np.full(len(columns), row))
-        self._cols.append(np.asarray(columns))
+        self._cols.append(np.asarray(columns, dtype=np.int64))
         self._values.append(np.asarray(values, dtype=float))
-
-
-def _joined(parts: Sequence[NDArray[np.generic]]) -> NDArray[np.generic]:
-    return np.concatenate(parts) if parts else np.zeros(0)

@@ -28,7 +28,12 @@ def capacities(candidates: Candidates) -> Iterator[Capacity]:
                 yield code, array.name, _bytes(candidates, code, array.name), carried
     if estate.windows and all(window.rate for window in estate.windows):
         total = sum(_seconds(estate, w) * w.rate for w in estate.windows)
-        yield "nights-rate", "", _bytes(candidates, "nights-rate", ""), _kept(estate, total)
+        yield (
+            "nights-rate",
+            "",
+            _bytes(candidates, "nights-rate", ""),
+            _kept(estate, total),
+        )
 
 
 def cutovers(estate: Estate) -> int | None:

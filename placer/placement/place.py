@@ -9,7 +9,7 @@ from placer.candidates.table import Candidates
 from placer.placement import goals, rows, shortage
 from placer.placement.layout import Layout, layout
 from placer.placement.reasons import reasons
-from placer.placement.search import Found, Progress, at_solution, search
+from placer.placement.search import Found, Halted, Progress, at_solution, search
 from placer.placement.settle import settle
 from placer.plan import Goal, Reason, Shortage
 
@@ -51,7 +51,10 @@ class Nothing:
 
 
 def place(
-    candidates: Candidates, seconds: float, progress: Progress = lambda _: None
+    candidates: Candidates,
+    seconds: float,
+    progress: Progress = lambda _: None,
+    halted: Halted = lambda: False,
 ) -> Placement | Nothing:
     """Solve the placement of an estate.
 
@@ -63,6 +66,8 @@ def place(
         [s] time for the search.
     progress
         Told of each goal when it is solved.
+    halted
+        Asked between steps; once true, the best so far is kept.
     """
     homeless = shortage.homeless(candidates)
     if homeless:
@@ -70,7 +75,7 @@ def place(
     plan = layout(candidates)
     program = rows.program(plan)
     start = _staying(plan)
-    found = search(program, goals.costs(plan), seconds, start, progress)
+    found = search(program, goals.costs(plan), seconds, start, progress, halted)
     if found.x is None:
         return _nothing(plan, seconds, timed_out=not found.impossible)
     return _placement(plan, found)

@@ -13,8 +13,7 @@ def reasons(candidates: Candidates, places: Ints) -> list[Reason]:
     strained = _strained(candidates)
     broken = _broken(candidates.estate)
     return [
-        _reason(candidates, v, int(p), strained, broken)
-        for v, p in enumerate(places)
+        _reason(candidates, v, int(p), strained, broken) for v, p in enumerate(places)
     ]
 
 
@@ -43,7 +42,9 @@ def _strained(candidates: Candidates) -> set[int]:
     return found
 
 
-def over_limit(block: Block, places: Ints) -> np.ndarray[tuple[int], np.dtype[np.bool_]]:
+def over_limit(
+    block: Block, places: Ints
+) -> np.ndarray[tuple[int], np.dtype[np.bool_]]:
     """Return which owners a placement takes over their limit, nothing bought."""
     worst = block.use(places).max(axis=1)
     result: np.ndarray[tuple[int], np.dtype[np.bool_]] = worst > block.limits[:, 0]
@@ -52,7 +53,9 @@ def over_limit(block: Block, places: Ints) -> np.ndarray[tuple[int], np.dtype[np
 
 def _broken(estate: Estate) -> set[str]:
     """Return volumes of rules that today's places break."""
-    return {v for rule in estate.rules if _is_broken(estate, rule) for v in rule.volumes}
+    return {
+        v for rule in estate.rules if _is_broken(estate, rule) for v in rule.volumes
+    }
 
 
 def _is_broken(estate: Estate, rule: Rule) -> bool:

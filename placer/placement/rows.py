@@ -37,7 +37,9 @@ def _add_limit(builder: Builder, layout: Layout, block: Block, owner: int) -> No
     ]
     if not places:
         return
-    uses = np.array([layout.items.column(block, item, pool) for _, item, pool in places])
+    uses = np.array(
+        [layout.items.column(block, item, pool) for _, item, pool in places]
+    )
     steps = _gains(layout, block, owner)
     columns = [column for column, _, _ in places] + [column for column, _ in steps]
     gains = np.array([-gain for _, gain in steps])
@@ -65,8 +67,8 @@ def array_hosts(builder: Builder, layout: Layout) -> None:
             key = RowKey("array-hosts", array.name)
             builder.at_most(key, columns, np.ones(len(columns)), array.hosts_at_most)
     for volume, item in zip(layout.estate.volumes, layout.items.of_volume, strict=True):
-        for array, pools in _pools_of(layout.estate, Level.ARRAY).items():
-            marker = layout.host_column.get((volume.host, array))
+        for name, pools in _pools_of(layout.estate, Level.ARRAY).items():
+            marker = layout.host_column.get((volume.host, name))
             columns = layout.columns_in(int(item), pools)
             if marker is not None and columns:
                 _implies(builder, RowKey("array-hosts", volume.id), columns, marker)

@@ -19,6 +19,7 @@ ROUNDING = 1e-9
 CHAIN_SHARE = 0.4
 
 Progress = Callable[[Goal], None]
+Halted = Callable[[], bool]
 
 
 @dataclass(frozen=True)
@@ -40,6 +41,7 @@ def search(
     seconds: float,
     start: Floats | None = None,
     progress: Progress = lambda _: None,
+    halted: Halted = lambda: False,
 ) -> Found:
     """Solve the goals in order.
 
@@ -55,17 +57,19 @@ def search(
         A solution to begin with, if one is known.
     progress
         Told of each goal when it is done.
+    halted
+        Asked between steps; once true, the best so far is kept.
     """
     deadline = time.monotonic() + seconds
     x = start if start is not None and program.holds(start) else None
     goals: list[Goal] = []
     for number, cost in enumerate(costs):
         share = (deadline - time.monotonic()) / (len(costs) - number)
-        answer = OneGoal(program, cost, max(share, 1.0)).solve(x)
+        answer = OneGoal(program, cost, max(share, 1.0), halted).solve(x)
         if answer.x is None:
             return Found(None, tuple(goals), program, answer.impossible)
         x = answer.x
-        goals.append(_goal(cost, answer))
+        goals.append(_goal(cost, answer, halted()))
         progress(goals[-1])
         if number < len(costs) - 1:
             program = _kept(program, cost, x)
@@ -75,8 +79,11 @@ def search(
 class OneGoal:
     """The search for one goal: relaxation, first solution, chain, exact finish."""
 
-    def __init__(self, program: Program, cost: Cost, seconds: float) -> None:
+    def __init__(
+        self, program: Program, cost: Cost, seconds: float, halted: Halted
+    ) -> None:
         self._program, self._cost, self._seconds = program, cost.vector, seconds
+        self._halted = halted
         self._begin = time.monotonic()
 
     def solve(self, start: Floats | None) -> solver.Answer:
@@ -107,9 +114,7 @@ class OneGoal:
     def _whole(self) -> solver.Answer:
         """Give the whole program to the solver: no solution is known."""
         seconds = max(1.0, self._left())
-        return solver.solve(
-            self._program, self._cost, seconds=seconds, gap=NEAR_ENOUGH
-        )
+        return solver.solve(self._program, self._cost, seconds=seconds, gap=NEAR_ENOUGH)
 
     def _finish(self, relaxed: solver.Relaxed, best: solver.Answer) -> solver.Answer:
         """Solve over the columns that can still be part of something better."""
@@ -128,9 +133,7 @@ class OneGoal:
 
     def _joined(self, *answers: solver.Answer) -> solver.Answer:
         """Keep the best solution that holds and the highest bound of all answers."""
-        known = [
-            a.x for a in answers if a.x is not None and self._program.holds(a.x)
-        ]
+        known = [a.x for a in answers if a.x is not None and self._program.holds(a.x)]
         best = min(known, key=lambda x: float(self._cost @ x), default=None)
         bound = max(answer.bound for answer in answers)
         if best is not None:
@@ -145,6 +148,8 @@ class OneGoal:
     def _far(self, answer: solver.Answer, gap: float) -> bool:
         if answer.x is None:
             return True
+        if self._halted():
+            return False
         value = float(self._cost @ answer.x)
         return value - answer.bound > max(gap * abs(value), ROUNDING)
 
@@ -152,7 +157,7 @@ class OneGoal:
         return self._seconds - (time.monotonic() - self._begin)
 
 
-def _goal(cost: Cost, answer: solver.Answer) -> Goal:
+def _goal(cost: Cost, answer: solver.Answer, halted: bool) -> Goal:
     assert answer.x is not None
     value = float(cost.vector @ answer.x)
     reached = _stated(cost, value)
@@ -163,8 +168,14 @@ def _goal(cost: Cost, answer: solver.Answer) -> Goal:
         reached=reached,
         bound=_stated(cost, float(answer.bound)),
         unit=cost.unit,
-        stopped=Stopped.DONE if done else Stopped.NEAR,
+        stopped=_stopped(done, halted),
     )
+
+
+def _stopped(done: bool, halted: bool) -> Stopped:
+    if done:
+        return Stopped.DONE
+    return Stopped.INTERRUPT if halted else Stopped.NEAR
 
 
 def _stated(cost: Cost, value: float) -> float:

@@ -92,7 +92,9 @@ def contradiction() -> tuple[Shortage, ...]:
 def nearest(layout: Layout, seconds: float) -> Nearest | None:
     """Return the placement with the least sum of overruns, None if rules forbid all."""
     program = rows.program(layout)
-    soft = np.array([i for i, k in enumerate(program.keys) if _may_overrun(program, i, k)])
+    soft = np.array(
+        [i for i, k in enumerate(program.keys) if _may_overrun(program, i, k)]
+    )
     elastic = program.elastic(soft)
     cost = np.concatenate([np.zeros(program.columns), np.ones(len(soft))])
     answer = solver.solve(elastic, cost, seconds=seconds, gap=1e-3)
@@ -149,7 +151,9 @@ class Words:
 
     def _limit(self, block: Block, owner: int) -> float:
         """Return the limit with what is bought in the owner's own pool."""
-        steps = [int(self._bought[p]) for p, o in enumerate(block.owner_of) if o == owner]
+        steps = [
+            int(self._bought[p]) for p, o in enumerate(block.owner_of) if o == owner
+        ]
         one_pool = len(steps) == 1
         return float(block.limits[owner, steps[0] if one_pool else 0])
 
@@ -160,7 +164,9 @@ class Words:
             requests = self._requests(block, owner, hour)
             return requests * (use - limit) / use, "requests/s"
         if block.code == "pool-busy":
-            return 100 * (use - limit) / max(self._drives(block, owner), 1), "busy-percent"
+            return 100 * (use - limit) / max(
+                self._drives(block, owner), 1
+            ), "busy-percent"
         return (use - limit) / block.scale, block.unit
 
     def _requests(self, block: Block, owner: int, hour: int) -> float:

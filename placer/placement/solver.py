@@ -43,7 +43,7 @@ class Relaxed:
     reduced: Floats
 
 
-def solve(  # noqa: PLR0913
+def solve(
     program: Program,
     cost: Floats,
     *,

@@ -1,0 +1,216 @@
+"""The command line: reads files, calls the stages, owns the exit codes.
+
+Exit codes: 0 done and audited; 1 the inventory has errors; 2 wrong use; 3 no feasible
+plan or moves left over; 4 stopped with nothing; 5 the audit refused the plan.
+"""
+
+import json
+import signal
+import sys
+from collections.abc import Callable
+from dataclasses import asdict, dataclass
+from enum import IntEnum
+from pathlib import Path
+from threading import Event
+
+import click
+
+from placer import __version__, audit, planner
+from placer.candidates.table import Candidates, candidates
+from placer.estate import Estate
+from placer.findings import Finding, errors, in_order
+from placer.plan import Goal, Plan, Status, Stopped
+from placer.report.check import check_text
+from placer.report.record import dump
+from placer.report.summary import plan_text
+from placer.report.verdict import verdict_text
+from placer.survey import survey
+from placer.words import gap, title, value
+from placer.workbook import blank as blank_workbook
+from placer.workbook import intake, planbook
+from placer.workbook.wholefile import FileOpenError, save_text
+
+OUTPUT = Path("output")
+
+
+class Exit(IntEnum):
+    """Exit codes of all commands."""
+
+    DONE = 0
+    BAD_INVENTORY = 1
+    NO_PLAN = 3
+    NOTHING = 4
+    REFUSED = 5
+
+
+@dataclass(frozen=True)
+class Opened:
+    """An inventory that was read: its estate is None where errors were found."""
+
+    estate: Estate | None
+    table: Candidates | None
+    findings: tuple[Finding, ...]
+    totals: tuple[intake.Total, ...]
+
+
+@click.group(context_settings={"help_option_names": ["-h", "--help"]})
+@click.version_option(__version__, prog_name="placer")
+def main() -> None:
+    """Place volumes on flash and spinning pools, and plan the nights to get there."""
+
+
+@main.command()
+@click.argument("file", type=click.Path(path_type=Path), default="inventory.xlsx")
+def blank(file: Path) -> None:
+    """Write an empty inventory workbook to FILE.
+
+    Example: placer blank my-estate.xlsx
+    """
+    click.echo(f"Wrote {_written(lambda: blank_workbook.write(file))}.")
+
+
+@main.command()
+@click.argument("inventory", type=click.Path(path_type=Path))
+@click.option("--json", "as_json", is_flag=True, help="Print findings for machines.")
+def check(inventory: Path, *, as_json: bool) -> None:
+    """Say what is wrong with an INVENTORY, what was assumed, and what it adds up to.
+
+    Example: placer check inventories/harbour.xlsx
+    """
+    opened = _open(inventory)
+    if as_json:
+        click.echo(_as_json(opened.findings))
+    else:
+        click.echo(check_text(opened.estate, opened.findings, opened.totals))
+    sys.exit(Exit.BAD_INVENTORY if errors(opened.findings) else Exit.DONE)
+
+
+@main.command()
+@click.argument("inventory", type=click.Path(path_type=Path))
+@click.option(
+    "--output",
+    type=click.Path(path_type=Path),
+    default=OUTPUT,
+    help="Folder of the plan.",
+)
+@click.option(
+    "--seconds",
+    type=click.IntRange(1),
+    help="Time for the search; policy's by default.",
+)
+@click.option("--json", "as_json", is_flag=True, help="Print the plan for machines.")
+@click.option("--quiet", is_flag=True, help="Print no progress.")
+def plan(
+    inventory: Path, output: Path, seconds: int | None, *, as_json: bool, quiet: bool
+) -> None:
+    """Plan an INVENTORY: placement, moves, nights; then audit the file written.
+
+    Example: placer plan inventories/harbour.xlsx
+    """
+    opened = _open(inventory)
+    if opened.estate is None or opened.table is None or errors(opened.findings):
+        click.echo(check_text(opened.estate, opened.findings, opened.totals))
+        sys.exit(Exit.BAD_INVENTORY)
+    estate = opened.estate
+    halted = _halt_on_interrupt()
+    made = planner.plan(
+        opened.table,
+        seconds or estate.policy.time_limit,
+        (lambda _: None) if quiet else _progress(estate.policy.currency),
+        halted.is_set,
+    )
+    if made.status is Status.NO_PLAN and not made.shortages:
+        click.echo("The search ended before it found any plan; nothing is written.")
+        sys.exit(Exit.NOTHING)
+    found, verdict = _write(output, estate, made, opened.findings)
+    record = dump(made, estate, opened.findings)
+    click.echo(record if as_json else plan_text(estate, made, opened.findings, verdict))
+    sys.exit(_code(made, found))
+
+
+@main.command(name="audit")
+@click.argument("inventory", type=click.Path(path_type=Path))
+@click.argument("plan_file", metavar="PLAN", type=click.Path(path_type=Path))
+@click.option("--json", "as_json", is_flag=True, help="Print findings for machines.")
+def audit_command(inventory: Path, plan_file: Path, *, as_json: bool) -> None:
+    """Replay a PLAN against its INVENTORY, and check every limit and claim.
+
+    Example: placer audit inventories/harbour.xlsx output/harbour-plan.xlsx
+    """
+    opened = _open(inventory)
+    if opened.estate is None:
+        click.echo(check_text(None, opened.findings, opened.totals))
+        sys.exit(Exit.BAD_INVENTORY)
+    try:
+        found = audit.judge(opened.estate, planbook.read(plan_file))
+    except planbook.PlanFileError as error:
+        raise click.ClickException(str(error)) from error
+    click.echo(_as_json(found) if as_json else verdict_text(found))
+    sys.exit(Exit.REFUSED if found else Exit.DONE)
+
+
+def _open(path: Path) -> Opened:
+    read = intake.read(path)
+    if read.estate is None:
+        return Opened(None, None, read.findings, read.totals)
+    table = candidates(read.estate)
+    found = in_order((*read.findings, *survey(table)))
+    return Opened(read.estate, table, found, read.totals)
+
+
+def _write(
+    folder: Path, estate: Estate, made: Plan, findings: tuple[Finding, ...]
+) -> tuple[tuple[Finding, ...], str]:
+    """Write the plan, audit the file, write the verdict into it; return both."""
+    path = folder / f"{estate.name}-plan.xlsx"
+    used = _written(lambda: planbook.write(path, estate, made, findings))
+    found = audit.judge(estate, planbook.read(used))
+    verdict = verdict_text(found)
+    _written(lambda: planbook.write(used, estate, made, findings, verdict))
+    record = dump(made, estate, findings)
+    _written(lambda: save_text(record, used.with_suffix(".json")))
+    return found, f"{verdict}\nWrote {used} and {used.with_suffix('.json').name}."
+
+
+def _written(write: Callable[[], Path]) -> Path:
+    """Call a writer; what hinders it is one clear sentence."""
+    try:
+        return write()
+    except FileOpenError as error:
+        raise click.ClickException(str(error)) from error
+    except OSError as error:
+        raise click.ClickException(f"cannot write: {error}") from error
+
+
+def _code(made: Plan, found: tuple[Finding, ...]) -> Exit:
+    if found:
+        return Exit.REFUSED
+    if made.status is Status.NO_PLAN or made.left:
+        return Exit.NO_PLAN
+    return Exit.DONE
+
+
+def _progress(currency: str) -> Callable[[Goal], None]:
+    def tell(goal: Goal) -> None:
+        said = f"{title(goal)}: {value(goal, currency)}, {gap(goal)}"
+        click.echo(said, err=True)
+
+    return tell
+
+
+def _halt_on_interrupt() -> Event:
+    """Return an event that the first Ctrl-C sets; a second one ends the program."""
+    halted = Event()
+
+    def halt(*_: object) -> None:
+        halted.set()
+        signal.signal(signal.SIGINT, signal.default_int_handler)
+        said = f"{Stopped.INTERRUPT}: keeping the best plan once this step is done"
+        click.echo(said, err=True)
+
+    signal.signal(signal.SIGINT, halt)
+    return halted
+
+
+def _as_json(findings: tuple[Finding, ...]) -> str:
+    return json.dumps([asdict(finding) for finding in findings], indent=2)
