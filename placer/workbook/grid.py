@@ -10,6 +10,8 @@ from placer.workbook import style
 from placer.workbook.cellkinds import TEXT, Kind, Raw
 from placer.workbook.plansheets import Scope, Table
 
+_SHORT = 13
+
 Heading = tuple[str, Kind]
 
 
@@ -51,7 +53,7 @@ class Grid:
         for column, (title, kind) in enumerate(columns, start=1):
             number = kind.number_format != TEXT.number_format
             style.header(style.at(self.sheet, self.row, column), title, number)
-            self._widen(column, max(map(len, title.split())))
+            self._widen(column, _header_width(title))
         self._headers.append(self.row)
         self.row += 1
 
@@ -62,6 +64,7 @@ class Grid:
             cell = style.at(self.sheet, self.row, column)
             style.put(cell, value, kind.number_format)
             self._widen(column, _width(value))
+        style.heighten(self.sheet, self.row)
         self.row += 1
 
     def _widen(self, column: int, characters: int) -> None:
@@ -72,6 +75,7 @@ class Grid:
         for label, value, kind in pairs:
             shown = None if value is None else kind.cell(value, zone)
             self.cells((TEXT, kind), (label, shown))
+            style.to_the_left(self.sheet, self.row - 1, 2)
 
     def table(self, table: Table, records: Iterable[object], scope: Scope) -> None:
         """Write the records of a plan under their headers."""
@@ -99,6 +103,11 @@ class Grid:
         self.sheet.auto_filter.ref = f"A1:{get_column_letter(columns)}{last}"
         self.settle()
         style.paper(self.sheet, titles=1)
+
+
+def _header_width(title: str) -> int:
+    """Return the width of a header: whole if it is short, else its longest word."""
+    return max(min(len(title), _SHORT), *map(len, title.split()))
 
 
 def _width(value: Raw) -> int:

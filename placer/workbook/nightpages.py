@@ -43,7 +43,7 @@ _CONTROL: Sequence[Heading] = (
     ("owner's", REAL),
     ("inventory", REAL),
 )
-_HAND_WRITTEN = {10: 11, 11: 22}
+_HAND_WRITTEN = {10: 10, 11: 18}
 
 
 def run_sheet(book: Workbook, estate: Estate, plan: Plan) -> None:

@@ -80,6 +80,19 @@ def band(sheet: Worksheet, row: int, text: str, columns: int) -> None:
         cell.font, cell.fill, cell.alignment = BOLD, _BAND_FILL, RUNNING
 
 
+def heighten(sheet: Worksheet, row: int) -> None:
+    """Give a row with long text the height of its lines."""
+    texts = (cell.value for cell in sheet[row] if isinstance(cell.value, str))
+    lines = max((len(wrap(text, WIDEST)) for text in texts), default=1)
+    if lines > 1:
+        sheet.row_dimensions[row].height = _LINE_HEIGHT * lines
+
+
+def to_the_left(sheet: Worksheet, row: int, column: int) -> None:
+    """Set a value beside its label, whether it is text or a number."""
+    at(sheet, row, column).alignment = _WRAPPED
+
+
 def title(sheet: Worksheet, row: int) -> None:
     """Make a row the title of its sheet."""
     at(sheet, row, 1).font = TITLE
@@ -97,7 +110,7 @@ def fit(
 ) -> None:
     """Set the widths of columns [characters] and the heights of rows of headers."""
     for column, characters in widths.items():
-        sheet.column_dimensions[get_column_letter(column)].width = characters + 3
+        sheet.column_dimensions[get_column_letter(column)].width = characters + 2
     for row in headers:
         lines = [
             len(wrap(str(sheet.cell(row, column).value or ""), characters + 3))
@@ -118,5 +131,6 @@ def paper(sheet: Worksheet, titles: int | None = None) -> None:
     footer.left.text, footer.right.text = "&A", "page &P of &N"
     sheet.oddFooter = footer
     sheet.page_margins.left = sheet.page_margins.right = 0.4
+    sheet.page_margins.top, sheet.page_margins.bottom = 0.6, 0.8
     if titles:
         sheet.print_title_rows = f"{titles}:{titles}"
