@@ -8,7 +8,8 @@ _EXAMPLES = (
     (
         "volumes",
         "K | db01 | S1 | 2000 | 1400 | 1500 | 70 % | 24.5",
-        "array | volume | pool | provisioned | occupied | requests | reads | throughput",
+        "array | volume | pool | provisioned | occupied | requests | reads | "
+        "throughput",
     ),
     (
         "pools",

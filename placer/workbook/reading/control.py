@@ -60,10 +60,9 @@ def read_controls(
     for row in rows:
         what = row.text("what")
         everything = what.casefold() == _ALL and what not in arrays
-        if what and not everything:
-            arrays.check(what, row.place("what"))
+        known = bool(what) and (everything or arrays.check(what, row.place("what")))
         meant = [v for v in volumes if everything or v.text("array") == what]
-        if what:
+        if known:
             _compare(row, meant)
         controls.append(_control(row, "" if everything else what))
     return tuple(controls)

@@ -46,32 +46,30 @@ def heading_row(
     """Return the index of the row that names most columns, of the first twenty."""
     known = frozenset[str]().union(*(column.keys for column in columns))
     hits = [
-        len(known & {take_apart(cell.text).key for cell in row if not cell.blank})
+        len(known & {spoken.key for cell in row for spoken in readings(cell.text)})
         for row in rows[:_HEADING_ROWS]
     ]
     return hits.index(max(hits)) if any(hits) else None
 
 
-def take_apart(text: str) -> Spoken:
-    """Return name and unit of a heading: in brackets, or as its first or last word."""
+def readings(text: str) -> tuple[Spoken, ...]:
+    """Return the ways to take a heading apart, the likeliest first.
+
+    The unit stands in brackets; or there is none; or it is the first word, as in
+    "MiB/s per drive", or the last.
+    """
     brackets = re.findall(r"[(\[](.*?)[)\]]", text)
     units = [unit for unit in map(unit_named, brackets) if unit]
+    unknown = brackets[-1] if brackets and not units else ""
     words = re.sub(r"[(\[].*?[)\]]", " ", text).split()
-    if units or not words:
-        return Spoken(_rate_key(words), units[-1] if units else None)
-    unknown = brackets[-1] if brackets else ""
-    if is_rate(unit_named(words[0])):
-        return Spoken(_rate_key(words), unit_named(words[0]), unknown)
-    if len(words) > 1 and unit_named(words[-1]):
-        return Spoken(key(" ".join(words[:-1])), unit_named(words[-1]), unknown)
-    return Spoken(key(text), None, unknown)
-
-
-def _rate_key(words: Sequence[str]) -> str:
-    """Return the key of a name; one that begins with a rate begins with ours."""
+    found = [Spoken(key(text), units[-1] if units else None, unknown)]
     if words and is_rate(unit_named(words[0])):
-        words = ["MB/s", *words[1:]]
-    return key(" ".join(words))
+        unit = units[-1] if units else unit_named(words[0])
+        ours = key(" ".join(["MB/s", *words[1:]]))
+        found.insert(0, Spoken(ours, unit, unknown))
+    if len(words) > 1 and unit_named(words[-1]) and not units:
+        found.append(Spoken(key(" ".join(words[:-1])), unit_named(words[-1]), unknown))
+    return tuple(found)
 
 
 class Headings:
@@ -112,10 +110,10 @@ class Headings:
 
     def one(self, cell: Cell, index: int = 0) -> Heading | None:
         """Return the column that one heading names, or None."""
-        spoken = take_apart(cell.text)
-        for column in self._columns:
-            if spoken.key in column.keys:
-                return Heading(column, index, self._scale(cell, column, spoken))
+        for spoken in readings(cell.text):
+            for column in self._columns:
+                if spoken.key in column.keys:
+                    return Heading(column, index, self._scale(cell, column, spoken))
         return None
 
     def _scale(self, cell: Cell, column: Column, spoken: Spoken) -> int:
@@ -178,5 +176,5 @@ class Headings:
 def nearest(text: str, columns: Sequence[Column]) -> Column | None:
     """Return the column whose name is spelt nearly like a text."""
     spelt = {spelling: column for column in columns for spelling in column.keys}
-    close = get_close_matches(take_apart(text).key, spelt, n=1, cutoff=0.8)
+    close = get_close_matches(key(text), spelt, n=1, cutoff=0.8)
     return spelt[close[0]] if close else None

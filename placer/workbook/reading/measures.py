@@ -6,7 +6,11 @@ from datetime import date, datetime, time, timedelta
 from decimal import Decimal
 
 from placer.workbook.column import NOT_LIMITED, Column, Kind
-from placer.workbook.reading.numbers import AmbiguousNumberError, number
+from placer.workbook.reading.numbers import (
+    AmbiguousNumberError,
+    NotANumberError,
+    number,
+)
 from placer.workbook.reading.raw import Cell
 from placer.workbook.reading.scales import own_scale
 from placer.workbook.reading.values import CellFaultError, Quantity
@@ -75,7 +79,7 @@ def _decimal(cell: Cell, column: Column) -> Decimal:
             f'{column.name} is "{cell.text}": a thousands mark or a decimal comma?',
             "write it without thousands marks and with a decimal point",
         ) from None
-    except ValueError:
+    except NotANumberError:
         raise _not_a_number(cell, column) from None
 
 

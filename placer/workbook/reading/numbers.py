@@ -18,6 +18,10 @@ _GROUPED = (
 )
 
 
+class NotANumberError(ValueError):
+    """The text is no number."""
+
+
 class AmbiguousNumberError(ValueError):
     """The text has two readings: "1,234" is 1234 or 1.234."""
 
@@ -29,7 +33,7 @@ def number(text: str) -> Decimal:
     ------
     AmbiguousNumberError
         A comma may be a thousands mark or a decimal comma.
-    ValueError
+    NotANumberError
         The text is no number.
     """
     plain = " ".join(text.split()).replace("\u2212", "-")
@@ -41,7 +45,7 @@ def number(text: str) -> Decimal:
         found = pattern.fullmatch(plain)
         if found:
             return _ungrouped(plain, found["mark"], found["point"])
-    raise ValueError(text)
+    raise NotANumberError(text)
 
 
 def _ungrouped(text: str, mark: str, point: str) -> Decimal:

@@ -4,12 +4,10 @@ import warnings
 from collections.abc import Iterator
 from itertools import groupby, zip_longest
 from pathlib import Path
-from zipfile import BadZipFile
 
 from openpyxl import Workbook, load_workbook
 from openpyxl.cell.cell import Cell as Source
 from openpyxl.cell.cell import MergedCell
-from openpyxl.utils.exceptions import InvalidFileException
 from openpyxl.worksheet.worksheet import Worksheet
 
 from placer.findings import Place
@@ -17,21 +15,13 @@ from placer.workbook.reading.raw import Cell, RawSheet, Trouble
 from placer.workbook.reading.remarks import Remarks
 
 _COMPOUND_FILE = b"\xd0\xcf\x11\xe0"
-_DAMAGED = (
-    BadZipFile,
-    InvalidFileException,
-    KeyError,
-    ValueError,
-    TypeError,
-    AttributeError,
-    EOFError,
-    SyntaxError,
-)
 
 
 def read_workbook(path: Path, remarks: Remarks) -> tuple[RawSheet, ...]:
     """Return the sheets of a workbook; none, and a finding, if it cannot be read."""
-    if path.read_bytes()[:4] == _COMPOUND_FILE:
+    with path.open("rb") as file:
+        begins = file.read(len(_COMPOUND_FILE))
+    if begins == _COMPOUND_FILE:
         remarks.error(
             "file",
             Place(),
@@ -41,12 +31,12 @@ def read_workbook(path: Path, remarks: Remarks) -> tuple[RawSheet, ...]:
         return ()
     try:
         stored, written = _load(path, stored=True), _load(path, stored=False)
-    except _DAMAGED:
+    except Exception:  # a damaged file makes the library raise almost anything
         remarks.error(
             "file",
             Place(),
             f"{path.name} is no whole workbook: it is damaged, cut short or empty",
-            "open it in the spreadsheet program and save it again as .xlsx",
+            "save it again as .xlsx; of CSV files name the folder",
         )
         return ()
     if stored.epoch.year == 1904:
