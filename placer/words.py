@@ -40,7 +40,12 @@ def value(goal: Goal, currency: str = "") -> str:
     """Return a goal's value with its unit; money in whole units of the currency."""
     if goal.name == "money":
         return f"{goal.value / CENTS:,.2f} {currency}".rstrip()
-    return f"{goal.value:,.10g} {goal.unit}".rstrip()
+    return f"{_figure(goal.value)} {goal.unit}".rstrip()
+
+
+def _figure(number: float) -> str:
+    """Return a number with as many digits as anybody reads."""
+    return f"{number:,.0f}" if abs(number) >= 1000 else f"{number:.4g}"
 
 
 def gap(goal: Goal) -> str:

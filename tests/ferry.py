@@ -52,7 +52,7 @@ mx,6,quay/fast,mail,2,office,600-800,80,60-100,60,24,day,10
 ts-a,5,quay/fast,test copies A,1,archive,500-800,85,5-15,60,32,,10
 ts-b,5,quay/fast,test copies B,1,archive,500-800,85,5-15,60,32,,10
 fs,6,quay/fast,,2,office,700-1000,80,8-25,80,48,day,15
-bk-db,6,quay/bulk,booking,3,counter,400-650,85,45-75,75,8,day,10
+bk-db,6,quay/bulk,booking,3,counter,400-650,85,42-70,75,8,day,10
 man-db,4,quay/bulk,manifests,2,deck,250-450,80,25-42,70,8,day,10
 cam,9,quay/bulk,cameras,3,archive,1800-2500,90,11-17,15,256,,10
 bak,5,quay/bulk,,1,archive,2000-2600,80,8-14,20,256,night,10

@@ -4,9 +4,9 @@ from collections import Counter
 from collections.abc import Iterable, Iterator, Sequence
 from itertools import islice
 
-from placer.estate import Estate, Pool
+from placer.estate import Estate
 from placer.findings import Finding, Severity
-from placer.plan import Moment, Plan, Use
+from placer.plan import Moment, Plan, Status, Use
 from placer.report.paragraphs import paragraph, table
 from placer.tally import Total, finish, nights, share_of_limit, shares, totals
 from placer.units import CENTS, MILLI, gib
@@ -76,26 +76,27 @@ def amounts(total: Total) -> str:
 
 
 def _pools(estate: Estate, plan: Plan, width: int) -> list[str]:
-    """Return the use of each pool's limits, today and planned."""
+    """Return the use of each pool's limits today, and planned or as near as it gets."""
     if not plan.uses:
         return []
+    then = Moment.NEAREST if plan.status is Status.NO_PLAN else Moment.PLANNED
     uses = {(u.where, u.limit, u.moment): u for u in plan.uses}
-    head = ("% of limit, today -> planned", *(word for word, _ in _LIMITS))
-    return table([head, *(_pool(pool, uses) for pool in estate.pools)], width)
+    head = (f"% of limit, today -> {then}", *(word for word, _ in _LIMITS))
+    rows = [
+        (pool.id, *(_change(pool.id, limit, then, uses) for _, limit in _LIMITS))
+        for pool in estate.pools
+    ]
+    return table([head, *rows], width)
 
 
-def _pool(pool: Pool, uses: Uses) -> Sequence[str]:
-    return (pool.id, *(_change(pool.id, limit, uses) for _, limit in _LIMITS))
-
-
-def _change(where: str, limit: str, uses: Uses) -> str:
+def _change(where: str, limit: str, then: Moment, uses: Uses) -> str:
     """Return ``81 -> 93 (Mon 10)``, a dash where the pool has no such limit."""
     today = uses.get((where, limit, Moment.TODAY))
-    planned = uses.get((where, limit, Moment.PLANNED))
-    if today is None and planned is None:
+    later = uses.get((where, limit, then))
+    if today is None and later is None:
         return "-"
-    hour = f" ({planned.hour})" if planned and planned.hour else ""
-    return f"{_share(today)} -> {_share(planned)}{hour}"
+    hour = f" ({later.hour})" if later and later.hour else ""
+    return f"{_share(today)} -> {_share(later)}{hour}"
 
 
 def _share(use: Use | None) -> str:
@@ -154,7 +155,7 @@ def _goals(estate: Estate, plan: Plan, width: int) -> list[str]:
 
 def _lacking(plan: Plan, width: int) -> list[str]:
     """Return what is missing for a plan, and what could not be scheduled."""
-    said = [" ".join((s.sentence, s.remedy)).rstrip() for s in plan.shortages]
+    said = ["; ".join(filter(None, (s.sentence, s.remedy))) for s in plan.shortages]
     said += [
         f"{left.volume} cannot go to {left.target}: {left.lacks}" for left in plan.left
     ]

@@ -48,7 +48,12 @@ def test_a_clock_time_carries_its_offset() -> None:
 def test_money_is_told_in_the_currency() -> None:
     money = Goal(name="money", value=123_450, reached=0, bound=0, unit="hundredths")
     assert value(money, "crowns") == "1,234.50 crowns"
+
+
+def test_figures_have_as_many_digits_as_anybody_reads() -> None:
     assert value(goal(2, 2)) == "2 steps"
+    assert value(goal(12.34567, 0)) == "12.35 steps"
+    assert value(goal(16461.63061, 0)) == "16,462 steps"
 
 
 def test_the_status_says_what_to_make_of_the_plan() -> None:

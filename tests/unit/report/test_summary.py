@@ -55,6 +55,16 @@ def test_pools_show_each_limit_today_and_planned() -> None:
     assert "40 -> 75 (Tue 14)" in line
 
 
+def test_without_a_plan_the_pools_show_how_near_it_gets() -> None:
+    uses = (
+        use("pool-room", Moment.TODAY, 0.5),
+        use("pool-room", Moment.NEAREST, 2.05),
+    )
+    text = plan_text(ESTATE, replace(NO_PLAN, uses=uses))
+    assert "% of limit, today -> nearest" in text
+    assert "50 -> 205" in text
+
+
 def test_moves_are_told_by_reason_with_what_they_copy() -> None:
     text = plan_text(ESTATE, PLAN)
     assert "Moves: 2, 120 GiB: limit 1 (60 GiB), relief 1 (60 GiB)" in text
@@ -78,7 +88,7 @@ def test_what_is_bought_is_told_with_the_budget() -> None:
 def test_a_shortage_is_told_with_its_remedy() -> None:
     lacking: Shortage = NO_PLAN.shortages[0]
     text = " ".join(plan_text(ESTATE, NO_PLAN).split())
-    assert f"{lacking.sentence} {lacking.remedy}" in text
+    assert f"- {lacking.sentence}; {lacking.remedy} " in text
     assert "No plan is possible: 1 shortage listed." in text
 
 
