@@ -36,6 +36,7 @@ _OVER_NUMBERS = Alignment(horizontal="right", vertical="top", wrap_text=True)
 _WRAPPED = Alignment(vertical="top", horizontal="left", indent=1, wrap_text=True)
 WIDEST = 60
 _LINE_HEIGHT = 13.5
+_SHOWN_AS_TEXT = 255  # longer ones show as #### in the format "@"; no source
 _TITLE_HEIGHT = 22
 
 
@@ -55,6 +56,8 @@ def put(cell: Cell, value: Raw, number_format: str = "General") -> None:
     elif value != "":
         cell.value = value
         if isinstance(value, str):
+            if len(value) > _SHOWN_AS_TEXT:
+                cell.number_format = "General"
             cell.data_type = "s"
             cell.quotePrefix = value.startswith(_RISKY)
 

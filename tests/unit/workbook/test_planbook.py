@@ -93,6 +93,16 @@ def test_no_cell_holds_a_formula(path: Path) -> None:
     assert book["summary"]["A3"].value == "=HYPERLINK(1)"
 
 
+def test_a_sentence_too_long_for_the_text_format_is_still_text(path: Path) -> None:
+    """Over 255 characters in the format "@" show as ####: common practice, no source."""
+    lacks = "=" + "x" * 300
+    plan = replace(PLAN, left=(replace(PLAN.left[0], lacks=lacks),))
+    write(path, ESTATE, plan)
+    assert read(path) == plan
+    cell = load_workbook(path)["left over"]["D2"]
+    assert (cell.number_format, cell.data_type) == ("General", "s")
+
+
 def test_findings_stand_errors_first() -> None:
     sheet = build(ESTATE, PLAN, FINDINGS)["findings"]
     assert [sheet.cell(row, 1).value for row in (2, 3)] == ["error", "warning"]
