@@ -1,0 +1,24 @@
+"""What a schedule hands on."""
+
+from dataclasses import dataclass
+
+from placer.plan import Booking, Left, Move
+
+
+@dataclass(frozen=True, slots=True)
+class Schedule:
+    """Moves with clock times, the pieces of their copies, and what found no night.
+
+    Attributes
+    ----------
+    moves
+        In the order of their starts.
+    bookings
+        In the order of their starts.
+    left
+        In the order in which the moves were to be tried.
+    """
+
+    moves: tuple[Move, ...] = ()
+    bookings: tuple[Booking, ...] = ()
+    left: tuple[Left, ...] = ()
