@@ -2,7 +2,17 @@
 
 from dataclasses import replace
 
-from corruptions.damage import damage, estate, goal, placed, plan, policy, use
+from corruptions.damage import (
+    both,
+    damage,
+    estate,
+    goal,
+    placed,
+    plan,
+    policy,
+    pool,
+    use,
+)
 from corruptions.sailing import PLAN
 from placer.estate import Aim, Control
 from placer.plan import Bought, Reason
@@ -10,6 +20,11 @@ from placer.units import GIB, MILLI
 
 GONE = tuple(u for u in PLAN.uses if (u.where, u.limit) != ("new", "controller-busy"))
 OF_PIPES = tuple(replace(u, unit="MB") if u.unit == "TB" else u for u in PLAN.uses)
+
+LOWERED = tuple(
+    replace(u, at_most=180.0) if (u.where, u.limit) == ("new/spin", "pool-room") else u
+    for u in PLAN.uses
+)
 
 DAMAGES = (
     damage("digest", "another inventory", estate(digest="d2")),
@@ -67,6 +82,12 @@ DAMAGES = (
     ),
     damage("claim-uses", "in another unit", plan(uses=OF_PIPES)),
     damage("claim-uses", "left out", plan(uses=GONE)),
+    damage(
+        "claim-uses",
+        "181 GiB of 180, said truly, is no plan",
+        both(pool("new/spin", fill_ceiling=180_000), plan(uses=LOWERED)),
+        "pool-room",
+    ),
     damage("claim-uses", "stated twice", plan(uses=(*PLAN.uses, PLAN.uses[0]))),
     damage(
         "claim-responses",
@@ -92,6 +113,14 @@ DAMAGES = (
     damage("claim-reasons", "logs lose", placed("new/logs", reason=Reason.RELIEF)),
     damage(
         "claim-reasons", "the attic is well", placed("old/relics", reason=Reason.CURE)
+    ),
+    damage(
+        "claim-reasons",
+        "nothing saved where no step is bought",
+        plan(bought=(Bought("new/flash", 0, 0),)),
+        "claim-goals",
+        "claim-uses",
+        "claim-responses",
     ),
     damage(
         "claim-reasons", "no reason given", placed("old/relics", reason=Reason.STAYS)

@@ -1,5 +1,7 @@
 """Damages that rules of the nights must find."""
 
+from dataclasses import replace
+
 from corruptions.damage import (
     array,
     booking,
@@ -61,6 +63,22 @@ DAMAGES = (
         "pool-room",
     ),
     damage("move-list", "a byte count of the day before", move("m4", size=299 * GIB)),
+    damage(
+        "move-list",
+        "left over for another target",
+        plan(
+            moves=PLAN.moves[:-1],
+            bookings=PLAN.bookings[:-1],
+            left=(replace(RELICS_LEFT, target="old/spin"),),
+        ),
+    ),
+    damage(
+        "move-list",
+        "left over where it is to stay",
+        plan(left=(Left("new/books", "new/spin", "new/spin", "a night"),)),
+    ),
+    damage("move-list", "to no pool", move("m5", target="inland/loft")),
+    damage("move-list", "of no volume", move("m5", volume="old/anchors")),
     damage("move-list", "a booking of no move", booking(5, move="m9"), "copy-whole"),
     damage("move-list", "a booking in no window", booking(5, window="never")),
     damage(
@@ -94,6 +112,7 @@ DAMAGES = (
         ),
         "route-together",
     ),
+    damage("one-copy", "at no rate", booking(5, rate=0), "copy-whole"),
     damage("array-out", "149 MB/s out of old", array("old", copies_out=149 * MB)),
     damage("array-out", "99 MB/s inside new", array("new", copies_out=99 * MB)),
     damage("array-in", "149 MB/s into new", array("new", copies_in=149 * MB)),

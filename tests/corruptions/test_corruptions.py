@@ -10,6 +10,7 @@ from corruptions import (
     damaged_placement,
     damaged_replay,
 )
+from corruptions.borderline import CLEAN
 from corruptions.damage import Damage
 from corruptions.harbour import ESTATE
 from corruptions.sailing import PLAN
@@ -35,6 +36,11 @@ def test_a_damage_raises_its_rule_and_no_other(damage: Damage) -> None:
     assert {finding.code for finding in found} == {damage.code} | damage.also
     assert {finding.severity for finding in found} == {Severity.ERROR}
     assert all(finding.sentence for finding in found)
+
+
+@pytest.mark.parametrize("name", CLEAN)
+def test_a_limit_that_is_only_reached_is_no_finding(name: str) -> None:
+    assert judge(*CLEAN[name]) == ()
 
 
 def test_every_rule_has_two_damages() -> None:

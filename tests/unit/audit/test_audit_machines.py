@@ -2,6 +2,7 @@
 
 from dataclasses import replace
 from fractions import Fraction
+from typing import Any
 
 import pytest
 
@@ -196,3 +197,26 @@ def test_controllers_share_what_the_failures_survived_leave() -> None:
     form = machines.controller_form(array)
     busy = share(form, 300 * MILLI, 100 * MILLI, 30 * MB, 10 * MB)
     assert busy == Fraction(54, 100)
+
+
+def test_a_black_box_without_drives_is_one_whole() -> None:
+    pool = replace(spinning(), drives=0, requests_at_most=200 * MILLI)
+    assert machines.servers(pool, 0) == 1
+
+
+RATED = Pool(
+    array="a",
+    name="p",
+    media=Media.FLASH,
+    drives=1,
+    dwpd=1,
+    life_days=1,
+)
+
+
+@pytest.mark.parametrize("missing", ["dwpd", "life_days", "drives"])
+def test_wear_needs_a_rating_a_life_and_drives(missing: str) -> None:
+    unrated: dict[str, Any] = {missing: 0}
+    assert machines.wears(RATED, 0)
+    assert not machines.wears(replace(RATED, **unrated), 0)
+    assert not machines.wears(replace(RATED, media=Media.SPINNING), 0)

@@ -219,6 +219,17 @@ def test_room_bought_counts_from_its_delivery() -> None:
         assert broken(case, bought) == expected
 
 
+def test_a_pool_without_drives_is_judged_once_they_come() -> None:
+    """Drives come on the second day; 1,200 reads/s are too many for one of them."""
+    step = Expansion(drives=1, price=0, at_most=1, delivery_days=2)
+    bare = replace(pool("two", 100), drives=0, expansion=step)
+    for reads, expected in ((1_000, set()), (1_200, {"pool-busy"})):
+        wide = replace(pool("one", 100), drives=2)
+        case = estate((volume("x", "one", reads),), (wide, bare))
+        made = plan(case, {"x": ("a/two", 3, 0)})
+        assert broken(case, replace(made, bought=(Bought("a/two", 1, 0),))) == expected
+
+
 @pytest.mark.parametrize("seed", range(60))
 def test_the_ledger_agrees_with_a_count_all_ten_minutes(seed: int) -> None:
     dice = Random(seed)

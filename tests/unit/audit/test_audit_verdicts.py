@@ -1,11 +1,27 @@
 """The verdict as a whole: a wear case worked by hand, and what a plan may lack."""
 
+from dataclasses import replace
+from fractions import Fraction
+
 import pytest
 
 from placer.audit import goal_values, judge, judge_placement
 from placer.audit.case import Case
 from placer.audit.limits import Reading, Scene, readings
-from placer.estate import Array, Estate, Hour, Load, Media, Policy, Pool, Route, Volume
+from placer.audit.response import Answers
+from placer.estate import (
+    Array,
+    Control,
+    Estate,
+    Hour,
+    Importance,
+    Load,
+    Media,
+    Policy,
+    Pool,
+    Route,
+    Volume,
+)
 from placer.findings import Finding
 from placer.plan import Placed, Plan, Status
 from placer.units import GB, GIB, MB, MILLI
@@ -175,3 +191,54 @@ def test_applications_chain_through_volumes_with_several() -> None:
     ]
     chains = Case(ESTATE, STAYING).chains(volumes)
     assert sorted(map(sorted, chains)) == [["a/1", "a/3", "a/5"], ["a/2"], ["a/4"]]
+
+
+# Steps of 10 % beyond a tolerance of 10 %, at most ten, by the register.
+@pytest.mark.parametrize(
+    ("measured", "steps"),
+    [(11_000, 0), (11_001, 1), (12_000, 1), (12_001, 2), (20_900, 10), (90_000, 10)],
+)
+def test_a_response_limit_is_missed_in_steps(measured: int, steps: int) -> None:
+    waiting = replace(
+        ESTATE.volumes[0],
+        response_measured=measured,
+        response_limit=10_000,
+        importance=Importance.HIGH,
+    )
+    estate = replace(ESTATE, volumes=(waiting,))
+    assert goal_values(estate, STAYING)["missed"] == 4 * steps
+
+
+# A gain counts from 30 % up, a loss whole; 100 requests/s, weight 2.
+@pytest.mark.parametrize(
+    ("measured", "relief"), [(142, 0), (143, Fraction(86, 10)), (90, -2), (100, 0)]
+)
+def test_small_gains_are_none_and_losses_count(
+    measured: int, relief: Fraction | int
+) -> None:
+    """The target reads in 100 µs and its drives never wait."""
+    calm = replace(DRIVES, reads_at_most=0)
+    moving = replace(
+        ESTATE.volumes[0],
+        load=(Load(100 * MILLI, 0, 0, 0),) * 24,
+        response_measured=measured,
+    )
+    pools = (calm, replace(calm, name="other"))
+    estate = replace(ESTATE, volumes=(moving,), pools=pools)
+    placed = replace(STAYING.placements[0], target="a/other")
+    values = goal_values(estate, replace(STAYING, placements=(placed,)))
+    assert values["relief"] == relief
+
+
+@pytest.mark.parametrize(("typed", "agrees"), [(1_000, True), (999, False)])
+def test_typed_totals_may_be_off_by_half_a_percent(typed: int, *, agrees: bool) -> None:
+    volume = replace(ESTATE.volumes[0], provisioned=1_005, occupied=0)
+    control = Control("a", 1, typed, None)
+    estate = replace(ESTATE, volumes=(volume,), controls=(control,))
+    assert ("control" not in codes(judge(estate, STAYING))) is agrees
+
+
+def test_flash_without_drives_has_no_wait_to_tell() -> None:
+    bare = replace(DRIVES, drives=0, usable=GIB)
+    case = Case(replace(ESTATE, pools=(bare,)), STAYING)
+    assert Answers(case).today(case.estate.volumes[0]) == DRIVES.read_time

@@ -1,0 +1,54 @@
+"""Changes that reach a limit without breaking it, or lift it: nothing may be found."""
+
+from corruptions.damage import (
+    Pair,
+    array,
+    estate,
+    goal,
+    move,
+    placed,
+    policy,
+    route,
+    use,
+    window,
+)
+from corruptions.harbour import at
+from placer.estate import Control, Host, Rule, RuleKind
+from placer.units import GIB, MB
+
+CLEAN: dict[str, Pair] = {
+    "money to the last hundredth": policy(budget=50_000),
+    "a volume of the largest size": array("inland", largest_volume=300 * GIB),
+    "a large volume that is copied inside its array": array(
+        "new", largest_volume=200 * GIB
+    ),
+    "the first copy at the earliest instant": policy(earliest=at(3, 13, 22)),
+    "the last cutover at the instant to finish by": policy(finish_by=at(3, 28, 1)),
+    "no date to finish by": policy(finish_by=0),
+    "no date of a cure": policy(cured_by=0),
+    "cured as the hold of tickets ends": policy(cured_by=at(3, 27, 22)),
+    "a window that names both arrays": window("second", arrays=("old", "inland")),
+    "any number of cutovers": window("first", cutovers=0),
+    "any number of copies": window("first", at_once=0),
+    "any rate in a window": window("first", rate=0),
+    "any rate of one copy": array("old", one_copy=0),
+    "any number of copies of an array": array("old", copies_at_once=0),
+    "any rate out of an array": array("old", copies_out=0),
+    "any rate over a route": route("old", "new", together=0),
+    "the route's rate": route("harbour", "inland", one_copy=50 * MB),
+    "a host not listed reaches all": estate(hosts=()),
+    "no routes at all": estate(routes=()),
+    "a host listed without arrays": estate(hosts=(Host(name="quay"),)),
+    "a rule without volumes": estate(rules=(Rule(kind=RuleKind.APART, volumes=()),)),
+    "nothing typed": estate(controls=(Control("", None, None, None),)),
+    "0.4 % more typed": estate(controls=(Control("", None, 1_917 * GIB, None),)),
+    "0.7 % off a response": placed("old/tickets-1", response_today=12_900),
+    "1 µs off a response": placed("new/logs", response_today=207),
+    "0.00001 % off a use": use("old/spin", "pool-busy", "planned", use=24.000_002),
+    "a gap of 0.009 %": goal("effort", bound=659.95),
+    "4 % of relief spent": goal("relief", reached=15_000.0, bound=15_000.0),
+    "volumes that stay where their host would not reach": estate(
+        hosts=(Host(name="office", arrays=("old",)),)
+    ),
+    "a cutover that ends with its window": move("m5", cutover=at(3, 28, 5)),
+}
