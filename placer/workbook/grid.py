@@ -57,14 +57,14 @@ class Grid:
         self._headers.append(self.row)
         self.row += 1
 
-    def cells(self, kinds: Iterable[Kind], values: Iterable[Raw]) -> None:
+    def cells(self, kinds: Iterable[Kind], values: Sequence[Raw]) -> None:
         """Write one row of cells that are already in the form of their kinds."""
         pairs = zip(kinds, values, strict=True)
         for column, (kind, value) in enumerate(pairs, start=1):
             cell = style.at(self.sheet, self.row, column)
             style.put(cell, value, kind.number_format)
             self._widen(column, _width(value))
-        style.heighten(self.sheet, self.row)
+        style.heighten(self.sheet, self.row, values)
         self.row += 1
 
     def _widen(self, column: int, characters: int) -> None:

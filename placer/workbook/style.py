@@ -83,11 +83,11 @@ def band(sheet: Worksheet, row: int, text: str, columns: int) -> None:
         cell.font, cell.fill, cell.alignment = BOLD, _BAND_FILL, RUNNING
 
 
-def heighten(sheet: Worksheet, row: int) -> None:
+def heighten(sheet: Worksheet, row: int, values: Iterable[Raw]) -> None:
     """Give a row with long text the height of its lines."""
-    texts = (cell.value for cell in sheet[row] if isinstance(cell.value, str))
-    lines = max((len(wrap(text, WIDEST)) for text in texts), default=1)
-    if lines > 1:
+    texts = [v for v in values if isinstance(v, str) and len(v) > WIDEST]
+    if texts:
+        lines = max(len(wrap(text, WIDEST)) for text in texts)
         sheet.row_dimensions[row].height = _LINE_HEIGHT * lines
 
 

@@ -94,7 +94,7 @@ def test_no_cell_holds_a_formula(path: Path) -> None:
 
 
 def test_a_sentence_too_long_for_the_text_format_is_still_text(path: Path) -> None:
-    """Over 255 characters in the format "@" show as ####: common practice, no source."""
+    """Over 255 characters in the format "@" show as ####: common practice."""
     lacks = "=" + "x" * 300
     plan = replace(PLAN, left=(replace(PLAN.left[0], lacks=lacks),))
     write(path, ESTATE, plan)
