@@ -15,7 +15,8 @@ Floats = NDArray[np.float64]
 Ints = NDArray[np.int64]
 
 INFINITY = float("inf")
-SHRINK = 1e-6
+SHRINK = 3e-6
+MOST_COUNTED = 10_000
 
 
 @dataclass(frozen=True, slots=True)
@@ -128,7 +129,7 @@ class Builder:
         Rows that count whole things are left as they are.
         """
         scale = max(abs(limit), float(np.abs(values).max(initial=0.0)), 1e-12)
-        counts = set(np.abs(values)) <= {1.0}
+        counts = _counts(values, limit)
         side = limit / scale * (1 if counts else 1 - SHRINK)
         self._add(key, columns, values / scale, -INFINITY, side)
 
@@ -167,3 +168,10 @@ class Builder:
         self._rows.append(np.full(len(columns), row))
         self._cols.append(np.asarray(columns, dtype=np.int64))
         self._values.append(np.asarray(values, dtype=float))
+
+
+def _counts(values: Floats, limit: float) -> bool:
+    """Return whether a row counts things, so that no tolerance can blur it."""
+    numbers = np.append(values, limit)
+    few = np.abs(numbers).max() <= MOST_COUNTED
+    return bool(few and (numbers == np.round(numbers)).all())

@@ -4,6 +4,7 @@
 """
 
 from collections.abc import Callable, Iterator
+from math import gcd
 
 import numpy as np
 
@@ -100,9 +101,12 @@ def budget(builder: Builder, layout: Layout) -> None:
     """``budget`` and ``steps``: price of all steps; no step without the one before."""
     if not layout.steps:
         return
-    prices = np.array([_price(layout, pool) for pool, _ in layout.steps])
+    prices = [_price(layout, pool) for pool, _ in layout.steps]
+    unit = gcd(*prices) or 1
+    values = np.array(prices, dtype=float) / unit
     columns = list(layout.step_column.values())
-    builder.at_most(RowKey("budget"), columns, prices, layout.estate.policy.budget)
+    budget = layout.estate.policy.budget // unit
+    builder.at_most(RowKey("budget"), columns, values, budget)
     for (pool, k), column in layout.step_column.items():
         if k > 1:
             before = layout.step_column[pool, k - 1]
@@ -164,9 +168,9 @@ def _implies(builder: Builder, key: RowKey, columns: list[int], marker: int) -> 
     builder.at_most(key, [*columns, marker], values, 0)
 
 
-def _price(layout: Layout, pool: int) -> float:
+def _price(layout: Layout, pool: int) -> int:
     expansion = layout.estate.pools[pool].expansion
-    return float(expansion.price) if expansion else 0.0
+    return expansion.price if expansion else 0
 
 
 def _groups(layout: Layout, kind: RuleKind) -> Iterator[tuple[Rule, list[int]]]:

@@ -1,7 +1,8 @@
 """The door to the solvers: a program and a cost in, a solution and a bound out.
 
 The quirks of the interface are locked in here.  HiGHS through MathOpt refuses a thread
-count and cannot be interrupted, so calls are kept short by their callers.
+count and cannot be interrupted, so calls are kept short by their callers.  Now and then it
+fails on a solution at the edge of its own tolerance; another solver then takes over.
 """
 
 from dataclasses import dataclass
@@ -77,10 +78,23 @@ def solve(
     if hint is not None:
         values = {model.get_variable(i): float(v) for i, v in enumerate(hint)}
         starts.solution_hints.append(mathopt.SolutionHint(variable_values=values))
-    result = mathopt.solve(
-        model, SOLVERS[solver], params=parameters, model_params=starts
-    )
+    result = _solved(model, SOLVERS[solver], parameters, starts)
     return _answer(model, result, program)
+
+
+def _solved(
+    model: mathopt.Model,
+    solver: mathopt.SolverType,
+    parameters: mathopt.SolveParameters,
+    starts: mathopt.ModelSolveParameters,
+) -> mathopt.SolveResult:
+    try:
+        return mathopt.solve(model, solver, params=parameters, model_params=starts)
+    except AttributeError:
+        # A failed status surfaces as this unrelated error in this version of the library.
+        return mathopt.solve(
+            model, SOLVERS["scip"], params=parameters, model_params=starts
+        )
 
 
 def relax(program: Program, cost: Floats) -> Relaxed | None:
