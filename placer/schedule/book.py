@@ -9,6 +9,7 @@ from placer.plan import Left, Reason, Transfer
 from placer.schedule.books import Books, Opens
 from placer.schedule.lacks import lacks
 from placer.schedule.result import Schedule
+from placer.schedule.sequence import sequence
 from placer.schedule.unit import Unit, units
 
 FORCED = (Reason.CURE, Reason.LIMIT)
@@ -40,17 +41,17 @@ def book(
     progress
         Told how many transfers have a night, and how many there are.
     """
-    order = list(dict.fromkeys(transfer.group for transfer in transfers))
-    best: _Outcome | None = None
-    for _ in range(_orders(len(order))):
-        outcome = _booked(candidates, _sorted(transfers, order), bought, progress)
-        if best is None or outcome.value < best.value:
-            best = outcome
-        left = [unit.group for unit in outcome.left]
-        if not left:
+    best = _booked(candidates, transfers, bought, progress)
+    order = _workable(candidates, transfers, bought)
+    groups = len({transfer.group for transfer in transfers})
+    for _ in range(min(ORDERS_AT_MOST, INSERTIONS_AT_MOST // max(1, groups))):
+        if not best.left:
             break
-        order = left + [group for group in order if group not in set(left)]
-    return _schedule(candidates, best, transfers) if best else Schedule()
+        outcome = _booked(candidates, order, bought, progress)
+        best = min(best, outcome, key=lambda each: each.value)
+        left = {unit.group for unit in outcome.left}
+        order = sorted(order, key=lambda transfer: transfer.group not in left)
+    return _schedule(candidates, best, transfers)
 
 
 @dataclass(frozen=True, slots=True)
@@ -69,14 +70,14 @@ class _Outcome:
         return forced, sum(transfer.worth for transfer in left), len(left), late
 
 
-def _orders(groups: int) -> int:
-    """Return how many orders to try."""
-    return max(1, min(ORDERS_AT_MOST, INSERTIONS_AT_MOST // max(1, groups)))
-
-
-def _sorted(transfers: Sequence[Transfer], order: Sequence[int]) -> list[Transfer]:
-    place = {group: number for number, group in enumerate(order)}
-    return sorted(transfers, key=lambda transfer: place[transfer.group])
+def _workable(
+    candidates: Candidates, transfers: Sequence[Transfer], bought: Ints
+) -> list[Transfer]:
+    """Return transfers in an order in which each fits once those before are done."""
+    books = Books(candidates, bought)
+    found = units(candidates, transfers, books.levels, books.lanes)
+    ordered = (found[number] for number in sequence(found))
+    return [part.transfer for unit in ordered for part in unit.parts]
 
 
 def _booked(

@@ -64,6 +64,11 @@ class Level:
         over = np.where(change > 0, change - self._free()[1][-1], -np.inf)
         return float(over.max()), int(over.argmax())
 
+    def loosest(self) -> Floats:
+        """Return what the highest of its limits leaves before any change (hours,)."""
+        free: Floats = np.max([limit for _, limit in self.bounds], axis=0) - self.use
+        return free
+
     @property
     def _forgiven(self) -> Floats:
         """What binary fractions may add."""
