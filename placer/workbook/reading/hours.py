@@ -7,7 +7,9 @@ from enum import Enum
 from zoneinfo import ZoneInfo
 
 from placer.estate import Hour, Load, Volume
+from placer.findings import Place
 from placer.units import MINUTES_PER_HOUR
+from placer.workbook.column import Effect
 from placer.workbook.reading.names import Names
 from placer.workbook.reading.remarks import Remarks
 from placer.workbook.reading.table import Row
@@ -150,6 +152,9 @@ class LoadReader:
     ) -> Volume:
         """Return the volume with a load for every hour of the estate."""
         if profile is None:
+            self._remarks.assume(
+                Effect.BUSY, "hour begins", "the busy hour holds all day", _row(volume)
+            )
             return replace(volume, load=volume.load * len(slots))
         loads = [profile.at(slot) or profile.highest(slot) for slot in slots]
         missing = loads.count(None)
@@ -163,6 +168,10 @@ class LoadReader:
             )
         whole = tuple(load or _NOTHING for load in loads)
         return replace(volume, load=whole, profiled=True)
+
+
+def _row(volume: Volume) -> Place:
+    return Place("load", volume.id)
 
 
 def _volume(row: Row) -> str:

@@ -44,7 +44,7 @@ class Cell:
 
 @dataclass(frozen=True, slots=True)
 class RawSheet:
-    """A sheet: its name and its rows, all of one length."""
+    """A sheet: its name and its rows, all of one length; wholly blank ones may lack."""
 
     name: str
     rows: tuple[tuple[Cell, ...], ...]

@@ -21,8 +21,8 @@ class Selector:
         self._kinds = kinds
         self._names = {kind: Names(kind, remarks, kinds[kind]) for kind in kinds}
 
-    def pick(self, row: Row) -> tuple[str, ...]:
-        """Return the ids a cell picks; what it does not find is an error."""
+    def pick(self, row: Row) -> tuple[str, ...] | None:
+        """Return the ids a cell picks; None, and a finding, if it names what is not."""
         said, place = row.text(self._column), row.place(self._column)
         word, _, rest = said.partition(" ")
         kind = word.casefold()
@@ -34,10 +34,10 @@ class Selector:
                 f'{self._column} is "{said}"',
                 f"write one of {', '.join(self._kinds)}, then names separated by ;",
             )
-            return ()
+            return None
         found = [name for name in names if self._names[kind].check(name, place)]
         ids = (each for name in found for each in self._kinds[kind][name])
-        return tuple(dict.fromkeys(ids))
+        return tuple(dict.fromkeys(ids)) if len(found) == len(names) else None
 
 
 class RuleReader:
@@ -58,7 +58,7 @@ class RuleReader:
         """Return one rule."""
         kind = RuleKind(row.text("rule") or RuleKind.NEVER_ON)
         relation = kind in _RELATIONS
-        volumes = self._what.pick(row) if row.given("what") else ()
+        volumes = (self._what.pick(row) if row.given("what") else None) or ()
         if relation and len(volumes) == 1:
             row.error(
                 "cell",
@@ -77,9 +77,17 @@ class RuleReader:
         )
 
     def _pools(self, row: Row) -> tuple[str, ...]:
-        if row.given("rule"):
-            return self._where.pick(row)
-        return ()
+        if not row.given("rule"):
+            return ()
+        found = self._where.pick(row)
+        if found == () and row.text("rule") == RuleKind.ONLY_ON:
+            row.error(
+                "unknown",
+                "where",
+                f'"{row.text("where")}" is no pool of the inventory',
+                "name pools there are",
+            )
+        return found or ()
 
     def _level(self, row: Row) -> Level:
         said = row.text("where").casefold() or Level.POOL.value

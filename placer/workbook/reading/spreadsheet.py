@@ -2,7 +2,7 @@
 
 import warnings
 from collections.abc import Iterator
-from itertools import groupby, zip_longest
+from itertools import groupby
 from pathlib import Path
 
 from openpyxl import Workbook, load_workbook
@@ -58,15 +58,26 @@ def _load(path: Path, *, stored: bool) -> Workbook:
 def _sheet(stored: Worksheet, written: Worksheet, remarks: Remarks) -> RawSheet:
     merged = _merged(stored, remarks)
     _say_hidden(stored, remarks)
+    places = _filled(written)
+    columns = sorted({column for _, column in places})
     rows = tuple(
         tuple(
-            _cell(cell, formula, merged)
-            for cell, formula in zip_longest(*pair)
-            if isinstance(cell, Source | MergedCell)
+            _cell(stored.cell(row, column), written.cell(row, column), merged)
+            for column in columns
         )
-        for pair in zip(stored.iter_rows(), written.iter_rows(), strict=True)
+        for row in sorted({row for row, _ in places})
     )
     return RawSheet(stored.title, rows)
+
+
+def _filled(sheet: Worksheet) -> list[tuple[int, int]]:
+    """Return rows and columns of cells with something in them.
+
+    Iterating over rows would make every cell up to the last one: a single stray mark
+    at the end of a sheet would cost minutes.
+    """
+    cells = sheet._cells.items()
+    return [place for place, cell in cells if cell.value is not None]
 
 
 def _cell(

@@ -5,9 +5,11 @@ from dataclasses import dataclass
 from fractions import Fraction
 
 from placer.estate import Importance, Load, Volume
-from placer.units import MILLI, PPM, demand
+from placer.units import KIB, MIB, MILLI, PPM, demand
 from placer.workbook.reading.names import Names
 from placer.workbook.reading.table import Row
+
+_SMALLEST, _LARGEST = 512, 16 * MIB  # mean request, common practice, no source
 
 
 @dataclass(frozen=True, slots=True)
@@ -129,6 +131,13 @@ def _sizes(row: Row) -> Sizes:
             "check both columns",
         )
     mean = row.exact("throughput") / requests if requests else Fraction(0)
+    if requests and row.given("throughput") and not _SMALLEST <= mean <= _LARGEST:
+        row.remarks.warn(
+            "size",
+            row.place("throughput"),
+            f"a request has {float(mean / KIB):g} KiB in the mean, which is odd",
+            "check the units of requests and throughput",
+        )
     return Sizes(_size(row, "read size", mean), _size(row, "write size", mean))
 
 

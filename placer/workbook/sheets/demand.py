@@ -159,7 +159,7 @@ VOLUMES = Sheet(
             highest=60000,
             effect=Effect.RESPONSE,
             synonyms=("response target", "latency limit"),
-            meaning="highest mean response of an hour its users accept",
+            meaning="highest mean response of an hour its users accept; 0: none",
         ),
         Column(
             name="importance",

@@ -2,9 +2,11 @@
 
 from datetime import date, time
 from pathlib import Path
+from typing import Any
 
 import pytest
 from openpyxl import load_workbook
+from openpyxl.worksheet.worksheet import Worksheet
 from sheetfiles import LEAST, TODAY
 
 from placer.workbook import blank
@@ -47,19 +49,25 @@ def test_read_as_it_is_it_lacks_volumes_and_pools_and_nothing_else(path: Path) -
     ]
 
 
+def fill(page: Worksheet, row: int, values: dict[str, Any]) -> None:
+    """Write values under their headings."""
+    for column, heading in enumerate(page[1], start=1):
+        page.cell(row, column, values.get(str(heading.value)))
+
+
 def test_filled_in_with_the_least_it_is_an_estate(path: Path) -> None:
     book = load_workbook(path)
     for name, (head, *rows) in LEAST.items():
-        columns = {cell.value: cell.column for cell in book[name][1]}
         for number, row in enumerate(rows, start=2):
-            for heading, value in zip(head, row, strict=True):
-                book[name].cell(number, columns[heading]).value = value
-    for row in book["policy"].iter_rows(min_row=2):
-        if row[0].value == "start date":
-            row[1].value = date(2026, 3, 2)
-    window = {"window": "n", "opens on": "Sat", "opens at": time(22), "lasts (h)": 6}
-    for cell in book["windows"][1]:
-        book["windows"].cell(2, cell.column).value = window.get(str(cell.value))
+            fill(book[name], number, dict(zip(map(str, head), row, strict=True)))
+    fill(
+        book["windows"],
+        2,
+        {"window": "n", "opens on": "Sat", "opens at": time(22), "lasts (h)": 6},
+    )
+    for cell in book["policy"]["A"]:
+        if cell.value == "start date":
+            book["policy"].cell(cell.row, 2, date(2026, 3, 2))
     book.save(path)
     found = read(path)
     assert found.findings == ()

@@ -1,5 +1,6 @@
 """The sheet load: hours of a day, of a week, or of dates, on the policy's clock."""
 
+from collections.abc import Sequence
 from pathlib import Path
 
 import pytest
@@ -11,9 +12,9 @@ HEAD = ["array", "volume", "day", "hour begins", "zone", "reads (1/s)", "writes 
 Lines = list[list[object]]
 
 
-def sheets(*rows: list[object], zone: str = "UTC") -> dict[str, Lines]:
+def sheets(*rows: Sequence[object], zone: str = "UTC") -> dict[str, Lines]:
     policy: Lines = [["setting", "value"], ["start date", "2026-01-12"], ["zone", zone]]
-    return least() | {"load": [list(HEAD), *rows], "policy": policy}
+    return least() | {"load": [list(HEAD), *map(list, rows)], "policy": policy}
 
 
 def reads(found: Estate, volume: int = 0) -> list[int]:
@@ -26,6 +27,8 @@ def test_without_the_sheet_the_busy_hour_holds_all_day(tmp_path: Path) -> None:
     assert {hour.weekday for hour in found.hours} == {None}
     assert reads(found) == [1050] * 24
     assert not found.volumes[0].profiled
+    assumed = [a for a in found.assumptions if a.sheet == "load"]
+    assert [(a.cells, a.value) for a in assumed] == [(3, "the busy hour holds all day")]
 
 
 def test_blank_days_give_the_hours_of_a_day(tmp_path: Path) -> None:

@@ -1,5 +1,6 @@
 """Windows and freezes: what the rows mean, and rows that mean nothing."""
 
+from collections.abc import Sequence
 from datetime import UTC, date, datetime
 from pathlib import Path
 
@@ -12,17 +13,17 @@ HEAD = ["window", "opens on", "opens at", "lasts (h)", "closes at", "zone", "unt
 Sheets = dict[str, list[list[object]]]
 
 
-def sheets(*rows: list[object], **policy: object) -> Sheets:
+def sheets(*rows: Sequence[object], **policy: object) -> Sheets:
     settings: dict[str, object] = {"start date": "2026-03-02", "zone": "UTC"}
     settings |= {name.replace("_", " "): value for name, value in policy.items()}
     return least() | {
-        "windows": [list(HEAD), *rows],
+        "windows": [list(HEAD), *map(list, rows)],
         "policy": [["setting", "value"], *([n, v] for n, v in settings.items())],
     }
 
 
-def minute(*parts: int) -> int:
-    return int(datetime(*parts, tzinfo=UTC).timestamp()) // 60
+def minute(year: int, month: int, day: int, hour: int = 0) -> int:
+    return int(datetime(year, month, day, hour, tzinfo=UTC).timestamp()) // 60
 
 
 def test_no_windows_are_saturdays_for_half_a_year_and_the_first_assumption(

@@ -17,8 +17,8 @@ def sheets(*settings: list[object]) -> Sheets:
     return least() | {"policy": [["setting", "value"], *settings]}
 
 
-def minute(*parts: int) -> int:
-    return int(datetime(*parts, tzinfo=UTC).timestamp()) // 60
+def minute(year: int, month: int, day: int, hour: int = 0) -> int:
+    return int(datetime(year, month, day, hour, tzinfo=UTC).timestamp()) // 60
 
 
 def test_without_a_policy_every_default_holds_from_today(tmp_path: Path) -> None:

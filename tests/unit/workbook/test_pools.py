@@ -49,7 +49,7 @@ def test_spinning_has_the_defaults_of_spinning(tmp_path: Path) -> None:
 
 
 def test_a_black_box_needs_no_drives_and_assumes_none(tmp_path: Path) -> None:
-    cells = {"requests at most (1/s)": 20_000, "usable (GiB)": 5000}
+    cells: dict[str, object] = {"requests at most (1/s)": 20_000, "usable (GiB)": 5000}
     box, assumed = _pool(tmp_path, "flash", cells)
     assert (box.requests_at_most, box.usable) == (20_000_000, 5000 * GIB)
     assert (box.read_time, box.reads_at_most, box.drive_rate) == (0, 0, 0)

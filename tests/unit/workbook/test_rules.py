@@ -77,6 +77,8 @@ def test_apart_and_together_have_a_level(
         ("volume K/db01", "never on", "array M", "unknown"),
         ("volume K/db01", "only on", "moon", "cell"),
         ("volume K/db01", "only on", None, "cell"),
+        ("volume K/db01", "only on", "media mixed", "unknown"),
+        ("volume K/db01; K/db09", "apart", None, "unknown"),
         ("volume K/db01", "near", "array L", "cell"),
         ("volume K/db01", "apart", None, "cell"),
         ("application gates", "apart", "rack", "cell"),

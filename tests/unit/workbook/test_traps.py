@@ -49,6 +49,13 @@ def test_hidden_columns_and_sheets_are_read_and_said(changed: Changed) -> None:
     ]
 
 
+def test_a_stray_mark_at_the_end_of_the_sheet_costs_nothing(changed: Changed) -> None:
+    changed["volumes"]["XFD1048576"].value = " "
+    found = changed.read()
+    assert found.estate is not None
+    assert found.findings == ()
+
+
 def test_merged_words_are_read_for_each_cell_and_said(changed: Changed) -> None:
     changed["volumes"].merge_cells("C2:C3")
     found = changed.read()
@@ -138,6 +145,13 @@ def test_throughput_without_requests_is_an_error(tmp_path: Path) -> None:
     sheets = least()
     sheets["volumes"][1][5] = 0
     assert str(only_error(intake(tmp_path, sheets)).place) == "volumes!H2"
+
+
+@pytest.mark.parametrize("rate", [0, 0.7, 26_000])
+def test_a_request_of_an_odd_size_is_a_warning(tmp_path: Path, rate: float) -> None:
+    sheets = least()
+    sheets["volumes"][1][7] = rate
+    assert codes(intake(tmp_path, sheets)) == [("warning", "size", "volumes!H2")]
 
 
 @pytest.mark.parametrize("array", ["k ", " K"])
