@@ -28,6 +28,7 @@ from placer.survey import survey
 from placer.words import gap, title, value
 from placer.workbook import blank as blank_workbook
 from placer.workbook import intake, planbook
+from placer.workbook.reading.control import Total
 from placer.workbook.wholefile import FileOpenError, save_text
 
 OUTPUT = Path("output")
@@ -50,7 +51,7 @@ class Opened:
     estate: Estate | None
     table: Candidates | None
     findings: tuple[Finding, ...]
-    totals: tuple[intake.Total, ...]
+    totals: tuple[Total, ...]
 
 
 @click.group(context_settings={"help_option_names": ["-h", "--help"]})

@@ -31,7 +31,7 @@ class Stopped(StrEnum):
     """Why the search ended."""
 
     DONE = "nothing left to search"
-    NEAR = "near enough or out of time"
+    NEAR = "near enough"
     TIME = "time limit"
     INTERRUPT = "interrupted"
 

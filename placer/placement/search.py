@@ -161,21 +161,23 @@ def _goal(cost: Cost, answer: solver.Answer, halted: bool) -> Goal:
     assert answer.x is not None
     value = float(cost.vector @ answer.x)
     reached = _stated(cost, value)
-    done = value - answer.bound <= max(PROVEN * abs(value), ROUNDING)
+    distance = (value - answer.bound) / max(abs(value), ROUNDING)
     return Goal(
         name=cost.name,
         value=reached,
         reached=reached,
         bound=_stated(cost, float(answer.bound)),
         unit=cost.unit,
-        stopped=_stopped(done, halted),
+        stopped=_stopped(distance, halted),
     )
 
 
-def _stopped(done: bool, halted: bool) -> Stopped:
-    if done:
+def _stopped(distance: float, halted: bool) -> Stopped:
+    if distance <= PROVEN:
         return Stopped.DONE
-    return Stopped.INTERRUPT if halted else Stopped.NEAR
+    if distance <= NEAR_ENOUGH:
+        return Stopped.NEAR
+    return Stopped.INTERRUPT if halted else Stopped.TIME
 
 
 def _stated(cost: Cost, value: float) -> float:

@@ -1,8 +1,8 @@
 """The door to the solvers: a program and a cost in, a solution and a bound out.
 
 The quirks of the interface are locked in here.  HiGHS through MathOpt refuses a thread
-count and cannot be interrupted, so calls are kept short by their callers.  Now and then it
-fails on a solution at the edge of its own tolerance; another solver then takes over.
+count and cannot be interrupted, so calls are kept short by their callers.  Now and then
+it fails on a solution at the edge of its own tolerance; another solver then takes over.
 """
 
 from dataclasses import dataclass
@@ -91,7 +91,7 @@ def _solved(
     try:
         return mathopt.solve(model, solver, params=parameters, model_params=starts)
     except AttributeError:
-        # A failed status surfaces as this unrelated error in this version of the library.
+        # In this version of the library a failed status surfaces as this error.
         return mathopt.solve(
             model, SOLVERS["scip"], params=parameters, model_params=starts
         )
