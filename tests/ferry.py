@@ -338,7 +338,7 @@ POLICY: dict[str, object] = {
     "currency": "EUR",
     "aim": "best use",
     "cured by": "2027-03-31",
-    "finish by": "2027-05-29",
+    "finish by": "2027-03-20",
     "change lead (working days)": 10,
     "seed": 1,
     "time limit (s)": 30,

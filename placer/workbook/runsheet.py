@@ -12,7 +12,7 @@ from placer.estate import Estate, Window
 from placer.plan import Booking, Move, Plan
 from placer.windows.clock import local
 
-_ORDER = ("cut over", "release source", "copy ends", "pause", "go on", "start copy")
+_ORDER = ("release source", "copy ends", "pause", "cut over", "go on", "start copy")
 
 
 @dataclass(frozen=True, slots=True)

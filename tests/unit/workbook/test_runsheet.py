@@ -29,6 +29,14 @@ def test_steps_stand_in_clock_order_under_their_window() -> None:
     assert [s.what for s in third.steps] == ["release source", "release source"]
 
 
+def test_at_one_instant_a_copy_ends_before_its_volume_is_cut_over() -> None:
+    end = PLAN.moves[0].cutover
+    booking = replace(PLAN.bookings[1], ends=end)
+    plan = replace(PLAN, moves=PLAN.moves[:1], bookings=(booking,))
+    steps = [s.what for s in sections(ESTATE, plan)[0].steps]
+    assert steps == ["start copy", "copy ends", "cut over booking"]
+
+
 def test_the_latest_start_of_a_cutover_leaves_its_minutes_in_the_window() -> None:
     """Window to 04:00, cutover of 60 min: latest start 03:00, by hand."""
     latest = [s.latest for part in sections(ESTATE, PLAN) for s in part.steps]
