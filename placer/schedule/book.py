@@ -42,8 +42,8 @@ def book(
         Told how many transfers have a night, and how many there are.
     """
     best = _booked(candidates, transfers, bought, progress)
-    order = _workable(candidates, transfers, bought)
     groups = len({transfer.group for transfer in transfers})
+    order = _workable(candidates, transfers, bought) if best.left else []
     for _ in range(min(ORDERS_AT_MOST, INSERTIONS_AT_MOST // max(1, groups))):
         if not best.left:
             break

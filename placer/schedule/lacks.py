@@ -10,14 +10,14 @@ from placer.schedule.pieces import carried, filled
 from placer.schedule.timeline import Span
 from placer.schedule.unit import Unit
 from placer.units import gib
-from placer.words import clock
+from placer.windows.clock import local
 
-_OVER = {
-    "pool-room": "room in pool",
-    "pool-thin": "room to provision in pool",
-    "array-volumes": "on array",
-    "pool-busy": "below the busy ceiling of pool",
-    "controller-busy": "below the controller ceiling of array",
+_SHORT = {
+    "pool-room": ("Room in pool", "too little"),
+    "pool-thin": ("Room to provision in pool", "too little"),
+    "array-volumes": ("Volumes on array", "too many"),
+    "pool-busy": ("Drives kept busy in pool", "above the ceiling"),
+    "controller-busy": ("Controllers of array", "above the ceiling"),
 }
 
 
@@ -55,20 +55,23 @@ def _limit(estate: Estate, needed: Change) -> str:
 
 def _missing(estate: Estate, level: Level, amount: float, hour: int) -> str:
     block = level.block
-    figure = f"{amount / block.scale:,.4g} {block.unit}"
     when = f" at {estate.hours[hour].label}" if block.hours > 1 else ""
-    return f"Lacks {figure} {_OVER[block.code]} {level.owner}{when}."
+    what, how = _SHORT[block.code]
+    figure = f"{amount / block.scale:,.4g} {block.unit}"
+    return f"{what} {level.owner}{when}: {figure} {how}."
 
 
 def _late(estate: Estate, needed: Change, usable: Sequence[Span]) -> str:
     """Say which limit lets it in only after the last window."""
-    last = usable[-1].latest
+    last = max(span.latest for span in usable)
     for level, change in needed:
         opens = level.earliest(change)
         if opens is not None and opens > last:
-            when = clock(opens, estate.policy.zone)
-            place = f"{_OVER[level.block.code]} {level.owner}"
-            return f"What it needs {place} is free from {when}, after the last window."
+            what, _ = _SHORT[level.block.code]
+            since = _clock(estate, opens)
+            return (
+                f"{what} {level.owner}: enough from {since} on, after the last window."
+            )
     return ""
 
 
@@ -77,18 +80,20 @@ def _cutovers(estate: Estate, books: Books, unit: Unit, usable: Sequence[Span]) 
     later = [span for span in usable if span.latest >= opens]
     if any(books.may_cut_over(unit, span) for span in later):
         return ""
-    since = clock(max(opens, later[0].start), estate.policy.zone)
+    since = _clock(estate, max(opens, later[0].start))
     return f"No cutover is left in the nights from {since} on."
 
 
 def _copying(estate: Estate, books: Books, unit: Unit, usable: Sequence[Span]) -> str:
     """Say how much of its longest copy the windows still carry."""
     last = max(span.latest for span in usable if books.may_cut_over(unit, span))
-    until = clock(last, estate.policy.zone)
+    until = _clock(estate, last)
     for part in unit.parts:
         size = part.transfer.size
         spans = [span for span in books.spans if span.admits(*part.arrays)]
-        limits = (earliest(part.taken) or 0, last)
+        opens = earliest(part.taken)
+        assert opens is not None
+        limits = (opens, last)
         fits = sum(map(carried, filled(books.lanes, part.copy, size, spans, limits)))
         if fits < size:
             return (
@@ -97,3 +102,7 @@ def _copying(estate: Estate, books: Books, unit: Unit, usable: Sequence[Span]) -
             )
     whole = gib(sum(part.transfer.size for part in unit.parts))
     return f"The windows until {until} do not carry its {whole:,.4g} GiB together."
+
+
+def _clock(estate: Estate, minute: int) -> str:
+    return local(minute, estate.policy.zone).isoformat(" ", "minutes")
