@@ -30,7 +30,11 @@ from placer.workbook.reading.remarks import Remarks
 from placer.workbook.reading.rules import RuleReader
 from placer.workbook.reading.source import read_source
 from placer.workbook.reading.table import Row, read_table
-from placer.workbook.reading.volumes import VolumeReader, read_classes
+from placer.workbook.reading.volumes import (
+    VolumeReader,
+    check_applications,
+    read_classes,
+)
 
 Tables = Mapping[str, tuple[Row, ...]]
 
@@ -204,5 +208,7 @@ def _demand(
     hours, volumes = LoadReader(volume_names, clock, remarks).read(
         tables["load"], measured
     )
-    say_unlisted_hosts(volumes, machines.hosts, machines.host_names, remarks)
+    rows = tables["volumes"]
+    say_unlisted_hosts(rows, machines.hosts, machines.host_names, remarks)
+    check_applications(rows, Names("application", remarks))
     return _Demand(hours, volumes)

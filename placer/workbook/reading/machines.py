@@ -2,7 +2,7 @@
 
 from collections.abc import Iterable, Sequence
 
-from placer.estate import Array, Host, Route, Volume
+from placer.estate import Array, Host, Route
 from placer.findings import Place
 from placer.units import supply
 from placer.workbook.columns import sheet
@@ -24,10 +24,14 @@ def read_arrays(
     others
         Arrays named in other sheets, with the cell.
     """
-    listed = [_array(row) for row in rows]
-    for array in listed:
-        if array.name:
-            names.add(array.name, array.place)
+    listed = []
+    sites = Names("site", remarks)
+    for row in rows:
+        listed.append(_array(row))
+        if row.given("array"):
+            names.add(row.text("array"), row.place("array"))
+        if row.given("site"):
+            sites.meet(row.text("site"), row.place("site"))
     return (*listed, *_unlisted(others, names, remarks))
 
 
@@ -128,17 +132,18 @@ def _route(row: Row, places: Names) -> Route:
 
 
 def say_unlisted_hosts(
-    volumes: Iterable[Volume], hosts: Sequence[Host], names: Names, remarks: Remarks
+    volumes: Iterable[Row], hosts: Sequence[Host], names: Names, remarks: Remarks
 ) -> None:
     """Say which hosts of volumes are not in the sheet hosts, where it has any."""
-    for volume in volumes:
-        new = bool(volume.host) and names.meet(volume.host, volume.place)
+    for row in volumes:
+        name, place = row.text("host"), row.place("host")
+        new = bool(name) and names.meet(name, place)
         if new and hosts:
             remarks.warn(
                 "unknown",
-                volume.place,
-                f'the host "{volume.host}" is not in the sheet hosts and is taken to '
-                "reach every array",
+                place,
+                f'the host "{name}" is not in the sheet hosts and is taken to reach '
+                "every array",
                 "add it to the sheet hosts",
             )
 

@@ -2,6 +2,7 @@
 
 import re
 import unicodedata
+from functools import cache
 
 from placer.units import (
     CENTS,
@@ -97,6 +98,7 @@ def _spellings() -> dict[str, str]:
 _SPELLINGS = _spellings()
 
 
+@cache
 def unit_named(text: str) -> str | None:
     """Return the unit a text means; "per drive" and the like are left aside."""
     plain = " ".join(unicodedata.normalize("NFKC", text).split())

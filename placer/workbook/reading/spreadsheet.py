@@ -1,9 +1,11 @@
 """Raw cells from a workbook; says what is hidden, filtered or merged."""
 
+import re
 import warnings
 from collections.abc import Iterator
 from itertools import groupby
 from pathlib import Path
+from zipfile import ZipFile
 
 from openpyxl import Workbook, load_workbook
 from openpyxl.cell.cell import Cell as Source
@@ -14,6 +16,7 @@ from placer.findings import Place
 from placer.workbook.reading.raw import Cell, RawSheet, Trouble
 from placer.workbook.reading.remarks import Remarks
 
+_FORMULA = re.compile(rb"<(\w+:)?f[ />]")
 _COMPOUND_FILE = b"\xd0\xcf\x11\xe0"
 
 
@@ -30,7 +33,8 @@ def read_workbook(path: Path, remarks: Remarks) -> tuple[RawSheet, ...]:
         )
         return ()
     try:
-        stored, written = _load(path, stored=True), _load(path, stored=False)
+        stored = _load(path, stored=True)
+        written = _load(path, stored=False) if _has_formulas(path) else stored
     except Exception:  # a damaged file makes the library raise almost anything
         remarks.error(
             "file",
@@ -53,6 +57,13 @@ def _load(path: Path, *, stored: bool) -> Workbook:
     with warnings.catch_warnings():
         warnings.simplefilter("ignore")
         return load_workbook(path, data_only=stored)
+
+
+def _has_formulas(path: Path) -> bool:
+    """Return whether a cell holds a formula (f in ECMA-376 part 1, 18.3.1.40)."""
+    with ZipFile(path) as parts:
+        names = [name for name in parts.namelist() if "worksheets/" in name]
+        return any(_FORMULA.search(parts.read(name)) for name in names)
 
 
 def _sheet(stored: Worksheet, written: Worksheet, remarks: Remarks) -> RawSheet:

@@ -49,6 +49,13 @@ def read_classes(rows: Iterable[Row], names: Names) -> dict[str, Row]:
     return classes
 
 
+def check_applications(rows: Iterable[Row], names: Names) -> None:
+    """Gather the names of applications; nearly the same ones are errors."""
+    for row in rows:
+        for name in row.names("application"):
+            names.meet(name, row.place("application"))
+
+
 class VolumeReader:
     """Builds volumes; gathers the names of volumes and checks pools and classes.
 

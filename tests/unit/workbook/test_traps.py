@@ -2,12 +2,13 @@
 
 from datetime import date, datetime
 from pathlib import Path
+from zipfile import ZipFile
 
 import pytest
 from openpyxl.utils.datetime import CALENDAR_MAC_1904
-from sheetfiles import Changed, intake, least, only_error
+from sheetfiles import TODAY, Changed, as_workbook, intake, least, only_error
 
-from placer.workbook.intake import Intake
+from placer.workbook.intake import Intake, read
 
 
 @pytest.fixture
@@ -22,6 +23,23 @@ def codes(found: Intake) -> list[tuple[str, str, str]]:
 def test_a_formula_without_a_stored_value_is_an_error(changed: Changed) -> None:
     changed["volumes"]["D2"].value = "=500*2"
     assert codes(changed.read()) == [("error", "formula", "volumes!D2")]
+
+
+def test_a_formula_with_a_stored_value_is_read_as_that_value(tmp_path: Path) -> None:
+    path = as_workbook(tmp_path / "estate.xlsx", least())
+    with ZipFile(path) as old:
+        parts = {name: old.read(name) for name in old.namelist()}
+    page = parts["xl/worksheets/sheet1.xml"]
+    parts["xl/worksheets/sheet1.xml"] = page.replace(
+        b"<v>1000</v>", b"<f>500*2</f><v>1000</v>"
+    )
+    assert parts["xl/worksheets/sheet1.xml"] != page
+    plain = read(path, TODAY)
+    with ZipFile(path, "w") as new:
+        for name, content in parts.items():
+            new.writestr(name, content)
+    assert read(path, TODAY) == plain
+    assert plain.estate is not None
 
 
 def test_hidden_and_filtered_rows_are_read_and_said(changed: Changed) -> None:
@@ -114,6 +132,21 @@ def test_names_are_the_same_or_different_never_nearly(
     sheets = least()
     sheets["volumes"][row][column] = name
     assert only_error(intake(tmp_path, sheets)).code == code
+
+
+def test_applications_and_sites_are_told_apart_by_more_than_case(
+    tmp_path: Path,
+) -> None:
+    sheets = least()
+    sheets["volumes"][0].append("application")
+    sheets["volumes"][1].append("gates; tickets")
+    sheets["volumes"][2].append("Tickets")
+    error = only_error(intake(tmp_path, sheets))
+    assert (error.code, str(error.place)) == ("id", "volumes!I3")
+    sheets = least()
+    sheets["arrays"] = [["array", "site"], ["K", "harbour"], ["L", "Harbour"]]
+    error = only_error(intake(tmp_path, sheets))
+    assert (error.code, str(error.place)) == ("id", "arrays!B3")
 
 
 def test_an_array_written_in_two_cases_is_an_error(tmp_path: Path) -> None:
