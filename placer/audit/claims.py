@@ -74,9 +74,14 @@ def _given_up(case: Case, goal: Goal) -> float:
 
 
 def uses(case: Case) -> Iterator[str]:
-    """Check that uses are stated, right, and none over its limit is called planned."""
+    """Check that uses are stated, right, and none over its limit is called planned.
+
+    What belongs to a shortage ("nearest") claims nothing.
+    """
     right = _right_uses(case)
     for use in case.plan.uses:
+        if use.moment is Moment.NEAREST and not case.plan.placements:
+            continue
         row = right.pop((use.where, use.limit, use.moment), None)
         if row is None:
             yield f"{use.where} has no {use.limit} {use.moment}, or it is stated twice"

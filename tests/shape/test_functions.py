@@ -45,13 +45,3 @@ def test_no_function_has_more_than_60_lines() -> None:
 def test_no_file_has_more_than_350_lines() -> None:
     lines = {p.name: len(p.read_text(encoding="utf-8").splitlines()) for p in FILES}
     assert {name: n for name, n in lines.items() if n > 350} == {}
-
-
-def test_public_names_have_docstrings() -> None:
-    bare = [
-        name
-        for name, node in functions()
-        if not node.name.startswith("_") and ast.get_docstring(node) is None
-    ]
-    inner = {"tell", "halt", "moved", "cost"}
-    assert [name for name in bare if name.rsplit(":", 1)[1] not in inner] == []
