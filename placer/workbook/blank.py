@@ -5,7 +5,6 @@ from pathlib import Path
 
 from openpyxl import Workbook
 from openpyxl.comments import Comment
-from openpyxl.styles import Alignment
 from openpyxl.utils import get_column_letter
 from openpyxl.worksheet.datavalidation import DataValidation
 from openpyxl.worksheet.worksheet import Worksheet
@@ -17,6 +16,7 @@ from placer.workbook.guide import lines
 from placer.workbook.wholefile import save
 
 _ROWS = 5000
+_GUIDE_WIDTHS = {1: 34, 2: 72, 3: 14}
 _TEXT_FORMAT = "@"
 _FORMATS = {Kind.DATE: "yyyy-mm-dd", Kind.NUMBER: "General", Kind.COUNT: "General"}
 _NOTE_WIDTH, _NOTE_HEIGHT = 320, 110
@@ -38,13 +38,15 @@ def write(path: Path) -> Path:
 
 def _guide(page: Worksheet) -> None:
     page.title = GUIDE
-    for number, (text, strong) in enumerate(lines(), start=1):
-        cell = style.at(page, number, 1)
-        style.put(cell, text)
-        cell.font = style.BOLD if strong else style.PLAIN
-        cell.alignment = Alignment(wrap_text=True, vertical="top")
+    for row, line in enumerate(lines(), start=1):
+        for column, text in enumerate((line.what, line.meaning, line.example), start=1):
+            cell = style.at(page, row, column)
+            style.put(cell, text)
+            cell.alignment = style.RUNNING
+            cell.font = style.BOLD if line.strong else style.PLAIN
     style.title(page, 1)
-    page.column_dimensions["A"].width = 100
+    style.fit(page, _GUIDE_WIDTHS)
+    style.paper(page)
 
 
 def _head(page: Worksheet, sheet: Sheet) -> None:
@@ -55,6 +57,7 @@ def _head(page: Worksheet, sheet: Sheet) -> None:
     widths = {n: _width(column) for n, column in enumerate(sheet.columns, start=1)}
     style.fit(page, widths, headers=(1,))
     page.freeze_panes = "A2"
+    style.paper(page, titles=1)
 
 
 def _width(column: Column) -> int:

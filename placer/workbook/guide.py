@@ -1,61 +1,77 @@
-"""The guide inside the empty inventory: which sheet, which columns first."""
+"""The guide inside the empty inventory: which sheet, which columns first, examples."""
 
 from collections.abc import Iterator
+from dataclasses import dataclass
 
-from placer.workbook.columns import SHEETS
+from placer.workbook.column import Column, Sheet
+from placer.workbook.columns import SETTINGS, SHEETS
 
-_EXAMPLES = (
-    (
-        "volumes",
-        "K | db01 | S1 | 2000 | 1400 | 1500 | 70 % | 24.5",
-        "array | volume | pool | provisioned | occupied | requests | reads | "
-        "throughput",
-    ),
-    (
-        "pools",
-        "S1 | K | spinning | 24 | 5 | 1 | 1200",
-        "pool | array | media | drives without spares | data per stripe | parity per "
-        "stripe | drive size",
-    ),
-    (
-        "policy",
-        "start date | 2026-03-02",
-        "setting | value",
-    ),
+_ADVICE = (
+    "Fill in volumes and pools first, one row each. Every other sheet can stay empty.",
+    "The note on a heading says what a blank cell means; every default used is listed.",
+    "Keep the headings and their units. Columns may be moved or left out.",
+    "Write shares with a percent sign (25 %), or as a number above 1.",
+    "Write a reduction as 2 or 2:1, a date as 2026-03-02, a time as 22:00.",
+    "Array and volume together are the key: write names the same everywhere.",
 )
+_EXAMPLES: dict[str, dict[str, str]] = {
+    "volumes": {
+        "array": "K",
+        "volume": "db01",
+        "pool": "S1",
+        "provisioned": "2000",
+        "occupied": "1400",
+        "requests": "1500",
+        "reads": "70 %",
+        "throughput": "24.5",
+    },
+    "pools": {
+        "pool": "S1",
+        "array": "K",
+        "media": "spinning",
+        "drives without spares": "24",
+        "data per stripe": "5",
+        "parity per stripe": "1",
+        "drive size": "1200",
+    },
+    "policy": {"start date": "2026-03-02", "zone": "Europe/Lisbon"},
+    "windows": {
+        "window": "weekend",
+        "opens on": "Sat",
+        "opens at": "22:00",
+        "closes at": "06:00",
+    },
+}
 
 
-def lines() -> Iterator[tuple[str, bool]]:
-    """Yield the lines of the guide, and whether each is a heading."""
-    yield "Inventory of volumes, pools and arrays", True
-    yield from (
-        (text, False)
-        for text in (
-            "Fill in volumes and pools first, one row each. Every other sheet can stay "
-            "empty: what a blank cell means is in the note on its heading, and placer "
-            "lists every default it used.",
-            "Keep the headings and their units. Columns may be moved or left out, and "
-            "columns of your own are not used.",
-            "Write shares with a percent sign (25 %) or as a number above 1; reduction "
-            "as 2 or 2:1; dates as 2026-03-02; times as 22:00.",
-            "Array and volume together are the key of a volume: write names the same "
-            "everywhere, also in upper and lower case.",
-        )
-    )
-    yield from _sheets()
-    yield from _examples()
+@dataclass(frozen=True, slots=True)
+class Line:
+    """A row of the guide: what, its meaning, an example; or a sentence alone."""
+
+    what: str
+    meaning: str = ""
+    example: str = ""
+    strong: bool = False
 
 
-def _sheets() -> Iterator[tuple[str, bool]]:
+def lines() -> Iterator[Line]:
+    """Yield the guide from the top."""
+    yield Line("Inventory of volumes, pools and arrays", strong=True)
+    yield from map(Line, _ADVICE)
+    yield Line("")
+    yield Line("sheet, column", "meaning", "example", strong=True)
     for sheet in SHEETS:
-        needed = ", ".join(c.header for c in sheet.columns if c.required)
-        yield f"{sheet.name}{' (needed)' if sheet.required else ''}", True
-        yield f"{sheet.meaning[0].upper()}{sheet.meaning[1:]}.", False
-        yield f"Fill in at least: {needed}.", False
+        yield from _sheet(sheet)
 
 
-def _examples() -> Iterator[tuple[str, bool]]:
-    yield "Examples of rows", True
-    for name, row, headings in _EXAMPLES:
-        yield f"{name}: {headings}", False
-        yield f"{name}: {row}", False
+def _sheet(sheet: Sheet) -> Iterator[Line]:
+    needed = "needed" if sheet.required else "may stay empty"
+    yield Line(f"{sheet.name} ({needed})", sheet.meaning, strong=True)
+    examples = _EXAMPLES.get(sheet.name, {})
+    for column in _columns(sheet):
+        if column.required or column.name in examples:
+            yield Line(column.header, column.meaning, examples.get(column.name, ""))
+
+
+def _columns(sheet: Sheet) -> tuple[Column, ...]:
+    return SETTINGS if sheet.name == "policy" else sheet.columns

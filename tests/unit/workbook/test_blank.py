@@ -73,3 +73,16 @@ def test_filled_in_with_the_least_it_is_an_estate(path: Path) -> None:
     assert found.findings == ()
     assert found.estate is not None
     assert len(found.estate.volumes) == 3
+
+
+def test_columns_that_spreadsheets_would_change_are_formatted_as_text(
+    path: Path,
+) -> None:
+    """As stored: the style of each column (ECMA-376 part 1, 18.3.1.13)."""
+    book = load_workbook(path)
+    for name, kept in (("pools", "reduction here"), ("windows", "opens at")):
+        headings = [str(cell.value) for cell in book[name][1]]
+        number = headings.index(kept) + 1
+        spans = book[name].column_dimensions.values()
+        formats = [d.number_format for d in spans if d.min <= number <= d.max]
+        assert formats == ["@"]
