@@ -84,5 +84,7 @@ def test_columns_that_spreadsheets_would_change_are_formatted_as_text(
         headings = [str(cell.value) for cell in book[name][1]]
         number = headings.index(kept) + 1
         spans = book[name].column_dimensions.values()
-        formats = [d.number_format for d in spans if d.min <= number <= d.max]
+        formats = [
+            d.number_format for d in spans if (d.min or 0) <= number <= (d.max or 0)
+        ]
         assert formats == ["@"]
