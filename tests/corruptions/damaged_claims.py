@@ -15,7 +15,7 @@ from corruptions.damage import (
 )
 from corruptions.sailing import PLAN
 from placer.estate import Aim, Control
-from placer.plan import Bought, Reason
+from placer.plan import Bought, Moment, Reason
 from placer.units import GIB, MILLI
 
 GONE = tuple(u for u in PLAN.uses if (u.where, u.limit) != ("new", "controller-busy"))
@@ -25,6 +25,7 @@ LOWERED = tuple(
     replace(u, at_most=180.0) if (u.where, u.limit) == ("new/spin", "pool-room") else u
     for u in PLAN.uses
 )
+NEAREST = (*PLAN.uses, replace(PLAN.uses[0], moment=Moment.NEAREST))
 
 DAMAGES = (
     damage("digest", "another inventory", estate(digest="d2")),
@@ -61,8 +62,10 @@ DAMAGES = (
         "the step is priced low",
         plan(bought=(Bought("new/flash", 1, 1),)),
     ),
-    damage("claim-bound", "money below its bound", goal("money", bound=50_001)),
+    damage("claim-bound", "money below its bound", goal("money", bound=50_001.0)),
     damage("claim-bound", "relief above its bound", goal("relief", bound=14_000)),
+    damage("claim-bound", "more than was reached", goal("relief", reached=14_400)),
+    damage("claim-uses", "called nearest in a plan", plan(uses=NEAREST)),
     damage("claim-bound", "a gap of 0.1 % is no proof", goal("effort", bound=659.3)),
     damage(
         "claim-bound",

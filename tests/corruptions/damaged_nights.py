@@ -77,6 +77,12 @@ DAMAGES = (
         "left over where it is to stay",
         plan(left=(Left("new/books", "new/spin", "new/spin", "a night"),)),
     ),
+    damage(
+        "move-list",
+        "two of one name",
+        move("m3", id="m2"),
+        "copy-whole",
+    ),
     damage("move-list", "to no pool", move("m5", target="inland/loft")),
     damage("move-list", "of no volume", move("m5", volume="old/anchors")),
     damage("move-list", "a booking of no move", booking(5, move="m9"), "copy-whole"),

@@ -23,7 +23,7 @@ from placer.estate import (
     Volume,
 )
 from placer.findings import Finding
-from placer.plan import Placed, Plan, Status
+from placer.plan import Moment, Placed, Plan, Status, Use
 from placer.units import GB, GIB, MB, MILLI
 
 HOURS = tuple(Hour(None, hour, f"{hour:02}:00") for hour in range(24))
@@ -121,6 +121,23 @@ def test_no_plan_is_held_to_trust_alone() -> None:
     assert judge(ESTATE, none) == ()
     other = Plan(inventory="e", digest="", version="0", status=Status.NO_PLAN)
     assert codes(judge(ESTATE, other)) == {"digest"}
+
+
+def test_uses_called_nearest_illustrate_that_there_is_no_plan() -> None:
+    nearest = Use(
+        where="a/flash",
+        limit="pool-room",
+        moment=Moment.NEAREST,
+        use=9,
+        at_most=8,
+        unit="GiB",
+    )
+    none = Plan(
+        inventory="e", digest="d", version="0", status=Status.NO_PLAN, uses=(nearest,)
+    )
+    assert judge(ESTATE, none) == ()
+    claimed = replace(none, uses=(replace(nearest, moment=Moment.PLANNED),))
+    assert codes(judge(ESTATE, claimed)) == {"claim-uses"}
 
 
 def test_a_plan_called_done_must_place_every_volume() -> None:
