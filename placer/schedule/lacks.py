@@ -13,11 +13,11 @@ from placer.units import gib
 from placer.windows.clock import local
 
 _SHORT = {
-    "pool-room": ("Room in pool", "too little"),
-    "pool-thin": ("Room to provision in pool", "too little"),
+    "pool-room": ("Room in pool", "GiB too little"),
+    "pool-thin": ("Room to provision in pool", "GiB too little"),
     "array-volumes": ("Volumes on array", "too many"),
     "pool-busy": ("Drives kept busy in pool", "above the ceiling"),
-    "controller-busy": ("Controllers of array", "above the ceiling"),
+    "controller-busy": ("Controllers of array", "% above the ceiling"),
 }
 
 
@@ -57,8 +57,7 @@ def _missing(estate: Estate, level: Level, amount: float, hour: int) -> str:
     block = level.block
     when = f" at {estate.hours[hour].label}" if block.hours > 1 else ""
     what, how = _SHORT[block.code]
-    figure = f"{amount / block.scale:,.4g} {block.unit}"
-    return f"{what} {level.owner}{when}: {figure} {how}."
+    return f"{what} {level.owner}{when}: {amount / block.scale:,.4g} {how}."
 
 
 def _late(estate: Estate, needed: Change, usable: Sequence[Span]) -> str:
