@@ -16,7 +16,8 @@ Ints = NDArray[np.int64]
 
 INFINITY = float("inf")
 SHRINK = 3e-6
-MOST_COUNTED = 10_000
+LEAST_UNIT = 1e-5
+ROUNDING = 1e-9
 
 
 @dataclass(frozen=True, slots=True)
@@ -108,6 +109,22 @@ class Program:
         return over
 
 
+def common_unit(values: Floats) -> float:
+    """Return the largest number that all values are multiples of (Euclid).
+
+    Values are at most about one; 0 where there is no such number above ``LEAST_UNIT``.
+    """
+    unit = 0.0
+    for value in np.unique(np.abs(values[values != 0])):
+        rest = float(value)
+        while rest > ROUNDING:
+            unit, rest = rest, abs(unit - round(unit / rest) * rest)
+        if unit < LEAST_UNIT:
+            return 0.0
+        unit = value / round(value / unit)
+    return unit
+
+
 @dataclass
 class Builder:
     """Collects rows while a program is put together."""
@@ -124,14 +141,16 @@ class Builder:
     def at_most(
         self, key: RowKey, columns: Sequence[int], values: Floats, limit: float
     ) -> None:
-        """Add ``values @ x <= limit``, shrunk so that solver tolerance cannot break it.
+        """Add ``values @ x <= limit`` so that solver tolerance cannot break it.
 
-        Rows that count whole things are left as they are.
+        Where all values are multiples of one unit, so is their sum: the limit is
+        rounded down to whole units, and what fills it to the last one still fits.
+        Other limits are shrunk by more than the tolerance.
         """
         scale = max(abs(limit), float(np.abs(values).max(initial=0.0)), 1e-12)
-        counts = _counts(values, limit)
-        side = limit / scale * (1 if counts else 1 - SHRINK)
-        self._add(key, columns, values / scale, -INFINITY, side)
+        unit, side = common_unit(values / scale), limit / scale
+        side = unit * np.floor(side / unit + ROUNDING) if unit else side * (1 - SHRINK)
+        self._add(key, columns, values / scale, -INFINITY, float(side))
 
     def equal(
         self, key: RowKey, columns: Sequence[int], values: Floats, to: float
@@ -168,10 +187,3 @@ class Builder:
         self._rows.append(np.full(len(columns), row))
         self._cols.append(np.asarray(columns, dtype=np.int64))
         self._values.append(np.asarray(values, dtype=float))
-
-
-def _counts(values: Floats, limit: float) -> bool:
-    """Return whether a row counts things, so that no tolerance can blur it."""
-    numbers = np.append(values, limit)
-    few = np.abs(numbers).max() <= MOST_COUNTED
-    return bool(few and (numbers == np.round(numbers)).all())
