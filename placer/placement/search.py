@@ -13,7 +13,7 @@ from placer.placement.goals import Cost
 from placer.placement.matrix import Program, RowKey
 from placer.plan import Goal, Stopped
 
-NEAR_ENOUGH = 2e-4
+NEAR_ENOUGH = 5e-4
 PROVEN = 1e-6
 ROUNDING = 1e-9
 CHAIN_SHARE = 0.4
