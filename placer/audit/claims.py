@@ -133,19 +133,20 @@ def _binds(case: Case, use: Use, row: Reading) -> bool:
 
 
 def responses(case: Case) -> Iterator[str]:
-    """Check that the responses stated are right."""
+    """Check that the responses stated are right, and the unknown are not stated."""
     answers = Answers(case)
     for name, placed in case.placed.items():
         volume = case.volumes[name]
         right = {
             "today": (placed.response_today, answers.today(volume)),
             "planned": (placed.response_planned, answers.planned(volume)),
-            "limit": (placed.response_limit, volume.response_limit),
         }
         for what, (stated, true) in right.items():
-            if abs(stated - true) > max(1, ANSWER * true):
+            if not isclose(stated, true, rel_tol=ANSWER, abs_tol=min(1, true)):
                 said, meant = words.wait(stated), words.wait(true)
                 yield f"the response {what} of {name} is {meant}, not {said}"
+        if placed.response_limit != volume.response_limit:
+            yield f"the response limit of {name} is {words.wait(volume.response_limit)}"
 
 
 def reasons(case: Case) -> Iterator[str]:

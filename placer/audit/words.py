@@ -7,6 +7,11 @@ from zoneinfo import ZoneInfo
 
 from placer.units import GIB, MB, MILLI, MS
 
+FIRST, LAST = (
+    int(datetime(year, 1, 2, tzinfo=UTC).timestamp()) // 60 for year in (1, 9999)
+)
+"""Instants [min UTC] that a calendar holds in every zone."""
+
 
 def figure(value: Fraction | float, unit: str) -> str:
     """Return a value with its unit: whole numbers bare, others with three places."""
@@ -35,7 +40,12 @@ def wait(microseconds: int) -> str:
 
 
 def clock(minute: int, zone: str) -> str:
-    """Return an instant [min UTC] as local day and time with its offset."""
+    """Return an instant [min UTC] as local day and time with its offset.
+
+    What no calendar holds comes back as the bare count: a plan may state anything.
+    """
+    if not FIRST < minute < LAST:
+        return f"minute {minute}"
     local = datetime.fromtimestamp(minute * 60, UTC).astimezone(ZoneInfo(zone))
     return local.strftime("%a %Y-%m-%d %H:%M %z")
 

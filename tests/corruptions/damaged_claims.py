@@ -104,6 +104,14 @@ DAMAGES = (
     ),
     damage(
         "claim-responses",
+        "1 µs of nothing known",
+        placed("old/relics", response_today=1),
+    ),
+    damage(
+        "claim-responses", "1 µs off a limit", placed("new/books", response_limit=4_001)
+    ),
+    damage(
+        "claim-responses",
         "known on a black box",
         placed("old/mail", response_planned=900),
     ),

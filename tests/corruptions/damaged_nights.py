@@ -208,6 +208,7 @@ DAMAGES = (
             bookings=bookings({5: SECOND_NIGHT}),
         ),
     ),
+    damage("hold", "until no calendar ends", move("m4", released=10**12)),
     damage("hold", "an hour short over summer time", move("m4", released=at(4, 3, 21))),
     damage("hold", "counted from the cutover", move("m1", released=at(3, 27, 23))),
     damage("hold", "a month is kept", volume("old/relics", hold_days=30)),
