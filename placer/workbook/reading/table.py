@@ -54,9 +54,8 @@ class Row:
         default = of_medium or described.default
         if described.derived or not default:
             return None
-        if column not in self.faulty:
-            shown = _with_unit(default, described)
-            self._say_default(described, f"{medium} {shown}" if of_medium else shown)
+        shown = _with_unit(default, described)
+        self._say_default(described, f"{medium} {shown}" if of_medium else shown)
         return read_cell(
             Cell(_as_typed(default, described), Place()),
             described,
@@ -103,8 +102,7 @@ class Row:
     def assume(self, column: str, value: str = "") -> None:
         """Record that an empty cell was filled from elsewhere."""
         described = self.sheet.column(column)
-        if column not in self.faulty:
-            self._say_default(described, value or described.default)
+        self._say_default(described, value or described.default)
 
     def _say_default(self, column: Column, value: str) -> None:
         row = Place(self.sheet.name, str(self.place()))

@@ -21,6 +21,15 @@ def test_any_separator_and_byte_order_mark(
     assert read(tmp_path / "estate", TODAY) == plain
 
 
+def test_a_quoted_heading_after_a_byte_order_mark(tmp_path: Path) -> None:
+    folder = as_folder(tmp_path / "estate", LEAST)
+    plain = read(folder, TODAY)
+    text = (folder / "volumes.csv").read_text(encoding="utf-8")
+    text = text.replace("array", '"array (harbour, inland)"', 1)
+    (folder / "volumes.csv").write_text("\ufeff" + text, encoding="utf-8")
+    assert read(folder, TODAY) == plain
+
+
 def test_decimal_commas_between_semicolons(tmp_path: Path) -> None:
     folder = as_folder(tmp_path / "estate", LEAST)
     plain = read(folder, TODAY)
