@@ -5,9 +5,10 @@ from dataclasses import dataclass
 
 from placer.candidates.block import Ints
 from placer.candidates.table import Candidates
-from placer.plan import Left, Reason, Transfer
+from placer.plan import Left, Reason, Shortage, Transfer
 from placer.schedule.books import Books, Opens
 from placer.schedule.lacks import lacks
+from placer.schedule.overruns import overruns
 from placer.schedule.result import Schedule
 from placer.schedule.sequence import sequence
 from placer.schedule.unit import Unit, units
@@ -28,7 +29,8 @@ def book(
 ) -> Schedule:
     """Find nights for transfers, in the order given, whole applications at a time.
 
-    What is left over is tried first in the next order, as long as that helps.
+    What is left over is tried first in the next order.  Orders are tried as long as
+    anything is left over, or not cured by the date asked, and the best is kept.
 
     Parameters
     ----------
@@ -43,9 +45,9 @@ def book(
     """
     best = _booked(candidates, transfers, bought, progress)
     groups = len({transfer.group for transfer in transfers})
-    order = _workable(candidates, transfers, bought) if best.left else []
+    order = _workable(candidates, transfers, bought) if best.wanting else []
     for _ in range(min(ORDERS_AT_MOST, INSERTIONS_AT_MOST // max(1, groups))):
-        if not best.left:
+        if not best.wanting:
             break
         outcome = _booked(candidates, order, bought, progress)
         best = min(best, outcome, key=lambda each: each.value)
@@ -60,14 +62,21 @@ class _Outcome:
 
     books: Books
     left: list[Unit]
+    overruns: tuple[Shortage, ...]
+
+    @property
+    def wanting(self) -> bool:
+        """Whether another order might do more."""
+        return bool(self.left or self.overruns)
 
     @property
     def value(self) -> tuple[float, ...]:
-        """What is left over, forced moves first, then how late the rest is."""
+        """What is not cured or left over, forced first, then how late the rest is."""
         left = [part.transfer for unit in self.left for part in unit.parts]
         forced = sum(transfer.reason in FORCED for transfer in left)
         late = sum(move.cutover for move in self.books.moves)
-        return forced, sum(transfer.worth for transfer in left), len(left), late
+        worth = sum(transfer.worth for transfer in left)
+        return len(self.overruns), forced, worth, len(left), late
 
 
 def _workable(
@@ -96,7 +105,9 @@ def _booked(
             progress(len(books.moves), len(transfers))
         else:
             waiting.append((unit, opens))
-    return _Outcome(books, [unit for unit, _ in waiting])
+    left = [unit for unit, _ in waiting]
+    found = overruns(candidates.estate, books.levels.every)
+    return _Outcome(books, left, tuple(found))
 
 
 def _retried(
@@ -129,4 +140,5 @@ def _schedule(
             for t in transfers
             if t.group in reasons
         ),
+        overruns=outcome.overruns,
     )

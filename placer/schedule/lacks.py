@@ -4,21 +4,12 @@ from collections.abc import Sequence
 
 from placer.estate import Estate
 from placer.schedule.books import Books
-from placer.schedule.level import Level
 from placer.schedule.levels import Change, earliest, merged
 from placer.schedule.pieces import carried, filled
+from placer.schedule.sayings import clock, short, where
 from placer.schedule.timeline import Span
 from placer.schedule.unit import Unit
 from placer.units import gib
-from placer.windows.clock import local
-
-_SHORT = {
-    "pool-room": ("Room in pool", "GiB too little"),
-    "pool-thin": ("Room to provision in pool", "GiB too little"),
-    "array-volumes": ("Volumes on array", "too many"),
-    "pool-busy": ("Drives kept busy in pool", "above the ceiling"),
-    "controller-busy": ("Controllers of array", "% above the ceiling"),
-}
 
 
 def lacks(estate: Estate, books: Books, unit: Unit) -> str:
@@ -49,15 +40,8 @@ def _limit(estate: Estate, needed: Change) -> str:
     """Say what is missing for as long as the plan lasts."""
     for level, change in needed:
         if level.earliest(change) is None:
-            return _missing(estate, level, *level.lacking(change))
+            return f"{short(estate, level, *level.lacking(change))}."
     return ""
-
-
-def _missing(estate: Estate, level: Level, amount: float, hour: int) -> str:
-    block = level.block
-    when = f" at {estate.hours[hour].label}" if block.hours > 1 else ""
-    what, how = _SHORT[block.code]
-    return f"{what} {level.owner}{when}: {amount / block.scale:,.4g} {how}."
 
 
 def _late(estate: Estate, needed: Change, usable: Sequence[Span]) -> str:
@@ -66,11 +50,8 @@ def _late(estate: Estate, needed: Change, usable: Sequence[Span]) -> str:
     for level, change in needed:
         opens = level.earliest(change)
         if opens is not None and opens > last:
-            what, _ = _SHORT[level.block.code]
-            since = _clock(estate, opens)
-            return (
-                f"{what} {level.owner}: enough from {since} on, after the last window."
-            )
+            since = clock(estate, opens)
+            return f"{where(level)}: enough from {since} on, after the last window."
     return ""
 
 
@@ -79,14 +60,14 @@ def _cutovers(estate: Estate, books: Books, unit: Unit, usable: Sequence[Span]) 
     later = [span for span in usable if span.latest >= opens]
     if any(books.may_cut_over(unit, span) for span in later):
         return ""
-    since = _clock(estate, max(opens, later[0].start))
+    since = clock(estate, max(opens, later[0].start))
     return f"No cutover is left in the nights from {since} on."
 
 
 def _copying(estate: Estate, books: Books, unit: Unit, usable: Sequence[Span]) -> str:
     """Say how much of its longest copy the windows still carry."""
     last = max(span.latest for span in usable if books.may_cut_over(unit, span))
-    until = _clock(estate, last)
+    until = clock(estate, last)
     for part in unit.parts:
         size = part.transfer.size
         spans = [span for span in books.spans if span.admits(*part.arrays)]
@@ -101,7 +82,3 @@ def _copying(estate: Estate, books: Books, unit: Unit, usable: Sequence[Span]) -
             )
     whole = gib(sum(part.transfer.size for part in unit.parts))
     return f"The windows until {until} do not carry its {whole:,.4g} GiB together."
-
-
-def _clock(estate: Estate, minute: int) -> str:
-    return local(minute, estate.policy.zone).isoformat(" ", "minutes")

@@ -12,6 +12,15 @@ ALWAYS = -(2**40)
 FORGIVEN = 1e-12
 
 
+@dataclass(frozen=True, slots=True)
+class Overrun:
+    """By how much a limit is overrun at worst, in which hour, until when [min]."""
+
+    amount: float
+    hour: int
+    until: int | None
+
+
 @dataclass(slots=True, eq=False)
 class Level:
     """Use and limit of one pool or array, in each hour, from step to step of time.
@@ -64,6 +73,28 @@ class Level:
         over = np.where(change > 0, change - self._free()[1][-1], -np.inf)
         return float(over.max()), int(over.argmax())
 
+    def overrun(self, since: int) -> Overrun | None:
+        """Return the largest overrun from a step of time on, None without one.
+
+        Parameters
+        ----------
+        since
+            One of the instants of ``bounds`` [min].
+        """
+        times, free = self._free()
+        later = free[times >= since]
+        bad = np.flatnonzero((later < -self._forgiven).any(axis=1))
+        if not len(bad):
+            return None
+        ends = [*times[times >= since][1:], None]
+        worst = later.min(axis=0)
+        until = ends[bad[-1]]
+        return Overrun(
+            amount=-float(worst.min()),
+            hour=int(worst.argmin()),
+            until=None if until is None else int(until),
+        )
+
     def loosest(self) -> Floats:
         """Return what the highest of its limits leaves before any change (hours,)."""
         free: Floats = np.max([limit for _, limit in self.bounds], axis=0) - self.use
@@ -86,8 +117,9 @@ class Level:
         times = np.unique(np.array(marks, dtype=np.int64))
         used = np.zeros((len(times), len(self.use)))
         used[0] = self.use
-        for minute, change in self.changes:
-            used[np.searchsorted(times, minute)] += change
+        if self.changes:
+            minutes, changes = zip(*self.changes, strict=True)
+            np.add.at(used, np.searchsorted(times, minutes), np.stack(changes))
         limits = np.empty_like(used)
         ends = (*(minute for minute, _ in self.bounds), np.inf)
         for (start, end), (_, limit) in zip(pairwise(ends), self.bounds, strict=True):

@@ -37,6 +37,11 @@ class Levels:
         self._room = [held[code] for code in ROOM if code in held]
         self._load = [held[code] for code in LOAD if code in held]
 
+    @property
+    def every(self) -> list[Level]:
+        """All levels, rule by rule."""
+        return [level for _, levels in (*self._room, *self._load) for level in levels]
+
     def room(self, volume: int, pool: int) -> Change:
         """Return the room one volume takes in a pool while it is there."""
         return _uses(self._room, volume, pool)
@@ -69,7 +74,7 @@ def earliest(change: Change) -> int | None:
 
 def _uses(held: Iterable[Held], volume: int, pool: int) -> list[tuple[Level, Floats]]:
     """Return whose limits a volume uses in a pool, and how much of each."""
-    owners = [(block, levels, block.owner(volume, pool)) for block, levels in held]
+    owners = [(block, levels, int(block.owner_of[pool])) for block, levels in held]
     return [
         (levels[owner], block.column(volume, pool))
         for block, levels, owner in owners

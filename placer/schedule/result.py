@@ -2,7 +2,7 @@
 
 from dataclasses import dataclass
 
-from placer.plan import Booking, Left, Move
+from placer.plan import Booking, Left, Move, Shortage
 
 
 @dataclass(frozen=True, slots=True)
@@ -17,8 +17,11 @@ class Schedule:
         In the order of their starts.
     left
         In the order in which the moves were to be tried.
+    overruns
+        Limits that are not yet kept on the date of the cure.
     """
 
     moves: tuple[Move, ...] = ()
     bookings: tuple[Booking, ...] = ()
     left: tuple[Left, ...] = ()
+    overruns: tuple[Shortage, ...] = ()

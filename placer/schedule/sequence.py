@@ -63,16 +63,18 @@ def sequence(units: Sequence[Unit]) -> list[int]:
     seen: set[frozenset[int]] = set()
     while open_ and len(best) < len(units) and len(seen) < STATES_AT_MOST:
         order = open_.pop()
-        if frozenset(order) in seen:
+        done = frozenset(order)
+        if done in seen:
             continue
-        seen.add(frozenset(order))
+        seen.add(done)
         best = max(best, order, key=len)
-        pending = [unit for unit in range(len(units)) if unit not in set(order)]
+        pending = [unit for unit in range(len(units)) if unit not in done]
         free = ask.free - ask.nets[order].sum(axis=0)
         if pending:
             fitting = ask.fitting(free, pending)
             open_ += [[*order, unit] for unit in reversed(fitting)]
-    return best + [unit for unit in range(len(units)) if unit not in set(best)]
+    gone = set(best)
+    return best + [unit for unit in range(len(units)) if unit not in gone]
 
 
 def _ask(units: Sequence[Unit]) -> _Ask:

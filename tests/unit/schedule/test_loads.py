@@ -100,6 +100,40 @@ def test_from_the_cure_on_the_ceiling_counts_for_room() -> None:
     assert booked(made, {"x": "a/three", "y": "a/one"}).left.keys() == {"y"}
 
 
+def overfull(cured_by: int) -> Estate:
+    """Return pool one with 30 of 20 GiB, cured by some day; sources held a day."""
+    crowd = [volume(name, "a/one", 10) for name in "xwv"]
+    made = halls(*crowd, rooms=(20, 20, 20))
+    day = START + cured_by * MINUTES_PER_DAY
+    return replace(made, policy=replace(made.policy, cured_by=day))
+
+
+def test_a_limit_that_is_not_kept_by_the_date_of_the_cure_is_named() -> None:
+    """The first night is on day 1, and its source is released on day 2 at 22:00."""
+    case = booked(overfull(cured_by=2), {"x": "a/two"})
+    (found,) = case.schedule.overruns
+    assert (found.limit, found.where, found.unit) == ("pool-room", "a/one", "GiB")
+    assert found.amount == 10
+    assert found.sentence == (
+        "Room in pool a/one: 10 GiB too little from the date of the cure, "
+        "2024-10-06 00:00+00:00, until 2024-10-06 22:00+00:00."
+    )
+    assert case.broken == {"cured-by"}
+
+
+def test_a_limit_kept_by_the_date_of_the_cure_is_not_named() -> None:
+    case = booked(overfull(cured_by=3), {"x": "a/two"})
+    assert case.schedule.overruns == ()
+    assert case.broken == set()
+
+
+def test_a_limit_nobody_cures_is_named_without_an_end() -> None:
+    case = booked(overfull(cured_by=3), {})
+    (found,) = case.schedule.overruns
+    assert found.sentence.endswith("2024-10-07 00:00+00:00, until the end.")
+    assert case.broken == {"cured-by"}
+
+
 def test_both_copies_count_among_the_volumes_of_an_array() -> None:
     """Two volumes of at most three: the second copy waits for the first release."""
     made = halls(volume("x", "a/one", 10), volume("y", "a/one", 10))
