@@ -9,11 +9,12 @@ from dataclasses import replace
 import pytest
 from smallestate import estate, load, policy, pool, volume
 
+from placer import audit, planner
 from placer.candidates.table import Candidates, candidates
 from placer.candidates.uses import over
-from placer.estate import Aim, Estate, Media, Volume
+from placer.estate import Aim, Estate, Load, Media, Volume
 from placer.placement.place import Placement, place
-from placer.plan import Goal, Reason
+from placer.plan import Goal, Reason, Status
 from placer.units import MILLI, MS, PERCENT
 
 SECONDS = 20.0
@@ -32,15 +33,19 @@ def requests(number: int) -> float:
     return float(1.067**number)
 
 
+def day_and_night(reads: float) -> tuple[Load, Load]:
+    return load(reads, kib=0), load(reads / 2, kib=0)
+
+
 def on_flash(number: int) -> Volume:
     """Return a volume that is busier than any on the spinning pools."""
-    asked = load(100 + number, kib=0)
-    return volume(f"busy{number:02}", FLASH[0], SIZE, asked, measured=0.5)
+    asked = day_and_night(100 + number)
+    return volume(f"busy{number:02}", FLASH[0], SIZE, *asked, measured=0.5)
 
 
 def on_spinning(number: int) -> Volume:
-    asked = load(requests(number), kib=0)
-    return volume(f"calm{number:02}", SPINNING[number % 2], SIZE, asked, measured=8)
+    asked = day_and_night(requests(number))
+    return volume(f"calm{number:02}", SPINNING[number % 2], SIZE, *asked, measured=8)
 
 
 def grown(record: Volume, limit: float) -> Volume:
@@ -103,6 +108,25 @@ def test_best_use_moves_nothing_where_flash_is_full_of_busier_volumes() -> None:
     found = placed(table)
     assert moved(table, found) == []
     assert goal(found, "relief").bound == pytest.approx(0, abs=1e-6)
+
+
+@pytest.mark.parametrize("aim", list(Aim))
+def test_the_plan_of_a_quiet_estate_is_to_leave_it(aim: Aim) -> None:
+    """End to end: no move, no night, proven best, and the audit agrees."""
+    whole = quiet(aim)
+    plan = planner.plan(candidates(whole), SECONDS)
+    assert (plan.status, plan.moves, plan.bookings) == (Status.PROVEN, (), ())
+    assert not any(placed.moves for placed in plan.placements)
+    assert audit.judge(whole, plan) == ()
+
+
+def test_the_busiest_get_their_nights() -> None:
+    """End to end: every volume that moves is booked, and the audit agrees."""
+    whole = quiet(Aim.BEST_USE, 2 * FAST * SIZE)
+    plan = planner.plan(candidates(whole), SECONDS)
+    assert plan.left == ()
+    assert {move.target for move in plan.moves} == set(FLASH)
+    assert audit.judge(whole, plan) == ()
 
 
 def test_nothing_moves_for_microseconds() -> None:

@@ -12,11 +12,10 @@ from dataclasses import replace
 import pytest
 from smallestate import estate, load, pool, volume
 
-from placer.candidates.table import Candidates, candidates
-from placer.candidates.uses import uses
+from placer import audit, planner
+from placer.candidates.table import candidates
 from placer.estate import Array, Estate, Load, Media
-from placer.placement.place import Nothing, place
-from placer.plan import Moment, Shortage, Use
+from placer.plan import Moment, Plan, Shortage, Status, Use
 from placer.units import DAYS_PER_YEAR, GB, KIB, MB, MILLI, PPM
 
 SECONDS = 20.0
@@ -65,23 +64,21 @@ def one_pool() -> Estate:
     return estate([database], [flash], arrays=[controllers], windows=())
 
 
-def missing(whole: Estate) -> tuple[Candidates, Nothing]:
-    table = candidates(whole)
-    found = place(table, SECONDS)
-    assert isinstance(found, Nothing)
-    return table, found
+def planned() -> Plan:
+    whole = one_pool()
+    plan = planner.plan(candidates(whole), SECONDS)
+    assert plan.status is Status.NO_PLAN
+    assert audit.judge(whole, plan) == ()
+    return plan
 
 
 def the_shortage() -> Shortage:
-    (shortage,) = missing(one_pool())[1].shortages
+    (shortage,) = planned().shortages
     return shortage
 
 
 def nearest(limit: str) -> Use:
-    table, found = missing(one_pool())
-    assert found.places is not None
-    assert found.bought is not None
-    every = uses(table, table.limits, found.places, found.bought, Moment.NEAREST)
+    every = [use for use in planned().uses if use.moment is Moment.NEAREST]
     return next(use for use in every if use.limit == limit)
 
 
@@ -124,5 +121,6 @@ def test_a_third_controller_is_a_remedy() -> None:
     """Two are left then, 62.5 % busy."""
     whole = one_pool()
     three = tuple(replace(array, controllers=3) for array in whole.arrays)
-    found = place(candidates(replace(whole, arrays=three)), SECONDS)
-    assert not isinstance(found, Nothing)
+    plan = planner.plan(candidates(replace(whole, arrays=three)), SECONDS)
+    assert plan.status is Status.PROVEN
+    assert plan.shortages == ()
