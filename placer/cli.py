@@ -9,6 +9,7 @@ import signal
 import sys
 from collections.abc import Callable
 from dataclasses import asdict, dataclass
+from datetime import date
 from enum import IntEnum
 from pathlib import Path
 from threading import Event
@@ -19,6 +20,7 @@ from placer import __version__, audit, planner
 from placer.candidates.table import Candidates, candidates
 from placer.estate import Estate
 from placer.findings import Finding, errors, in_order
+from placer.placement.watch import Watch
 from placer.plan import Goal, Plan, Status, Stopped
 from placer.report.check import check_text
 from placer.report.record import dump
@@ -117,8 +119,9 @@ def plan(
     made = planner.plan(
         opened.table,
         seconds or estate.policy.time_limit,
-        (lambda _: None) if quiet else _progress(estate.policy.currency),
-        halted.is_set,
+        Watch(halted=halted.is_set)
+        if quiet
+        else Watch(_progress(estate.policy.currency), halted.is_set),
     )
     if made.status is Status.NO_PLAN and not made.shortages:
         click.echo("The search ended before it found any plan; nothing is written.")
@@ -138,20 +141,22 @@ def audit_command(inventory: Path, plan_file: Path, *, as_json: bool) -> None:
 
     Example: placer audit inventories/harbour.xlsx output/harbour-plan.xlsx
     """
-    opened = _open(inventory)
+    try:
+        made = planbook.read(plan_file)
+    except planbook.PlanFileError as error:
+        raise click.ClickException(str(error)) from error
+    opened = _open(inventory, made.start)
     if opened.estate is None:
         click.echo(check_text(None, opened.findings, opened.totals))
         sys.exit(Exit.BAD_INVENTORY)
-    try:
-        found = audit.judge(opened.estate, planbook.read(plan_file))
-    except planbook.PlanFileError as error:
-        raise click.ClickException(str(error)) from error
+    found = audit.judge(opened.estate, made)
     click.echo(_as_json(found) if as_json else verdict_text(found))
     sys.exit(Exit.REFUSED if found else Exit.DONE)
 
 
-def _open(path: Path) -> Opened:
-    read = intake.read(path)
+def _open(path: Path, start: str = "") -> Opened:
+    """Read an inventory; ``start`` stands in where it names no start date."""
+    read = intake.read(path, date.fromisoformat(start) if start else None)
     if read.estate is None:
         return Opened(None, None, read.findings, read.totals)
     table = candidates(read.estate)

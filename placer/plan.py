@@ -149,7 +149,7 @@ class Goal:
 
     @property
     def gap(self) -> float:
-        """Distance of what was reached from the bound, as a share of what was reached."""
+        """Distance of what was reached from the bound, as a share of it."""
         distance = abs(self.reached - self.bound)
         return 0.0 if distance == 0 else distance / max(abs(self.reached), 1e-12)
 
@@ -188,12 +188,16 @@ class Left:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Plan:
-    """The whole result for one inventory."""
+    """The whole result for one inventory.
+
+    ``start`` is the day the plan starts from, as year-month-day in the policy's zone.
+    """
 
     inventory: str
     digest: str
     version: str
     status: Status
+    start: str = ""
     placements: tuple[Placed, ...] = ()
     bought: tuple[Bought, ...] = ()
     moves: tuple[Move, ...] = ()

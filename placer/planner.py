@@ -1,7 +1,5 @@
 """The pipeline from an estate to a plan; it only calls the stages."""
 
-from collections.abc import Callable
-
 import numpy as np
 
 from placer import __version__
@@ -11,19 +9,17 @@ from placer.candidates.uses import uses
 from placer.estate import Estate
 from placer.moves import transfers
 from placer.placement.place import Nothing, Placement, place
+from placer.placement.watch import UNWATCHED, Watch
 from placer.plan import Bought, Goal, Moment, Placed, Plan, Status, Use
 from placer.schedule import book
+from placer.windows.clock import local
 from placer.words import PROVEN_GAP
-
-Progress = Callable[[Goal], None]
-Halted = Callable[[], bool]
 
 
 def plan(
     candidates: Candidates,
     seconds: float,
-    progress: Progress = lambda _: None,
-    halted: Halted = lambda: False,
+    watch: Watch = UNWATCHED,
 ) -> Plan:
     """Plan an estate: placement, moves, nights.
 
@@ -33,12 +29,10 @@ def plan(
         The table of the estate.
     seconds
         [s] time for the search of the placement.
-    progress
-        Told of each goal when it is solved.
-    halted
-        Asked between steps of the search; once true, the best so far is kept.
+    watch
+        Told of each goal when it is solved, asked between steps whether to halt.
     """
-    found = place(candidates, seconds, progress, halted)
+    found = place(candidates, seconds, watch)
     if isinstance(found, Nothing):
         return _no_plan(candidates, found)
     moving = transfers(candidates, found.places, found.reasons)
@@ -48,6 +42,7 @@ def plan(
         digest=candidates.estate.digest,
         version=__version__,
         status=_status(found.goals),
+        start=_start(candidates.estate),
         placements=_placed(candidates, found),
         bought=_bought(candidates.estate, found.bought),
         moves=schedule.moves,
@@ -68,9 +63,14 @@ def _no_plan(candidates: Candidates, found: Nothing) -> Plan:
         digest=candidates.estate.digest,
         version=__version__,
         status=Status.NO_PLAN,
+        start=_start(candidates.estate),
         uses=_today(candidates) + nearest,
         shortages=found.shortages,
     )
+
+
+def _start(estate: Estate) -> str:
+    return local(estate.policy.start, estate.policy.zone).date().isoformat()
 
 
 def _status(goals: tuple[Goal, ...]) -> Status:

@@ -19,7 +19,7 @@ class Block:
 
     The use of volume v placed in pool p is ``asks[v] @ costs[p]`` in each hour, and
     ``moved[v] * move_costs[p]`` more in each hour if p is not its home.  It counts for
-    the owner of p (or of its home, where ``by_home``).
+    the owner of p.
 
     Attributes
     ----------
@@ -50,7 +50,6 @@ class Block:
     home: Ints
     moved: Floats
     move_costs: Floats
-    by_home: bool = False
     unit: str = ""
     scale: float = 1.0
 
@@ -64,17 +63,13 @@ class Block:
         stay: Floats = self.asks[volume] @ self.costs[pool]
         return stay + self._way(volume, pool)
 
-    def owner(self, volume: int, pool: int) -> int:
-        """Return whose limit a placement counts for, -1 for nobody's."""
-        return int(self.owner_of[self.home[volume] if self.by_home else pool])
-
     def use(self, places: Ints) -> Floats:
         """Return the use of each owner and hour, (owners, hours), for a placement."""
         total = np.zeros((len(self.owners), self.hours))
         per_volume = np.einsum("vhq,vq->vh", self.asks, self.costs[places])
         away = places != self.home
         per_volume += (self.moved * self.move_costs[places] * away)[:, None]
-        owners = self.owner_of[self.home if self.by_home else places]
+        owners = self.owner_of[places]
         known = owners >= 0
         np.add.at(total, owners[known], per_volume[known])
         return total

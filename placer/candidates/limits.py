@@ -4,19 +4,22 @@
 register, for the sizes and loads of a date.
 """
 
-from collections.abc import Callable, Sequence
+from collections.abc import Callable, Mapping, Sequence
 from dataclasses import dataclass
+from fractions import Fraction
 from functools import cached_property
 
 import numpy as np
 
 from placer.candidates.block import Block, Floats, Ints
 from placer.candidates.loads import loads
-from placer.estate import Estate, Pool
+from placer.estate import Array, Estate, Pool
 from placer.physics import capacity, controllers, demand, drives, flash
 from placer.units import GIB, PERCENT, PPM, SECONDS_PER_DAY, TB
 
 NOBODY = -1
+
+Factors = tuple[float, ...]
 
 
 @dataclass(frozen=True)
@@ -52,10 +55,6 @@ class Date:
         """Most expansion steps any pool may buy."""
         return max((_steps(pool) for pool in self.estate.pools), default=0)
 
-    def still(self) -> Floats:
-        """Return asks of a rule that only counts moves: (volumes, 1, 1) of nothing."""
-        return np.zeros((len(self.estate.volumes), 1, 1))
-
 
 def sizes(estate: Estate, months: int) -> Floats:
     """Return the room of each volume before reduction [B]."""
@@ -70,97 +69,79 @@ def limits(estate: Estate, months: int) -> tuple[Block, ...]:
 
 def pool_room(date: Date) -> Block:
     """``pool-room``: landed bytes within fill ceiling and least free."""
-    return _of_pools(
+    pools = [pool for pool in date.estate.pools if _has_room_row(pool)]
+    return _block(
         date,
-        "pool-room",
-        [pool for pool in date.estate.pools if _has_room_row(pool)],
+        Kind("pool-room", "GiB", GIB),
         date.sizes[:, None, None],
+        _by_pool(date, pools, capacity.room),
         lambda pool: (PPM / pool.reduction,),
-        lambda pool, steps: float(capacity.room(pool, steps)),
-        unit="GiB",
-        scale=GIB,
     )
 
 
 def pool_thin(date: Date) -> Block:
     """``pool-thin``: provisioned bytes within the ratio to usable."""
+    pools = [pool for pool in date.estate.pools if pool.thin_at_most]
     provisioned = np.array([v.provisioned for v in date.estate.volumes], dtype=float)
-    return _of_pools(
+    return _block(
         date,
-        "pool-thin",
-        [pool for pool in date.estate.pools if pool.thin_at_most],
+        Kind("pool-thin", "GiB", GIB),
         provisioned[:, None, None],
+        _by_pool(date, pools, capacity.thin_room),
         lambda _: (1.0,),
-        lambda pool, steps: float(capacity.thin_room(pool, steps)),
-        unit="GiB",
-        scale=GIB,
     )
 
 
 def pool_busy(date: Date) -> Block:
     """``pool-busy``: drives kept busy in each hour within the ceiling."""
-    return _of_pools(
+    costs = {pool.id: drives.busy_cost(pool) for pool in date.estate.pools}
+    pools = [pool for pool in date.estate.pools if costs[pool.id]]
+    return _block(
         date,
-        "pool-busy",
-        [pool for pool in date.estate.pools if drives.busy_cost(pool)],
+        Kind("pool-busy", "drives"),
         date.loads,
-        _busy_factors,
-        lambda pool, steps: pool.busy_ceiling / PPM * drives.busy_drives(pool, steps),
-        unit="drives",
+        _by_pool(date, pools, _busy_at_most),
+        lambda pool: _factors(costs[pool.id]),
     )
 
 
 def pool_wear(date: Date) -> Block:
     """``pool-wear``: bytes at the drives over the life asked within the budget."""
-    written = date.loads[:, :, 3].mean(axis=1)[:, None, None]
-    return _of_pools(
+    pools = [pool for pool in date.estate.pools if flash.is_worn(pool)]
+    return _block(
         date,
-        "pool-wear",
-        [pool for pool in date.estate.pools if flash.is_worn(pool)],
-        written,
+        Kind("pool-wear", "TB", TB),
+        date.loads[:, :, 3].mean(axis=1)[:, None, None],
+        _by_pool(date, pools, flash.budget),
         lambda pool: (
             float(flash.host_copies(pool)) * SECONDS_PER_DAY * pool.life_days,
         ),
-        lambda pool, steps: float(flash.budget(pool, steps)),
-        move_cost=lambda pool: float(flash.move_copies(pool)),
-        unit="TB",
-        scale=TB,
+        lambda pool: float(flash.move_copies(pool)),
     )
 
 
 def controller_busy(date: Date) -> Block:
     """``controller-busy``: share of the controllers left after failures survived."""
-    arrays = {a.name: a for a in date.estate.arrays if controllers.controller_cost(a)}
-
-    def cost(pool: Pool) -> tuple[float, ...]:
-        factors = controllers.controller_cost(arrays[pool.array])
-        assert factors
-        return factors.read, factors.write, factors.byte, factors.byte
-
-    ceilings = [a.controller_ceiling / PPM for a in arrays.values()]
-    return _of_arrays(
+    costs = {a.name: controllers.controller_cost(a) for a in date.estate.arrays}
+    arrays = [array for array in date.estate.arrays if costs[array.name]]
+    return _block(
         date,
-        "controller-busy",
-        list(arrays),
+        Kind("controller-busy", "%", PERCENT / PPM),
         date.loads,
-        cost,
-        ceilings,
-        unit="%",
-        scale=PERCENT / PPM,
+        _by_array(date, arrays, lambda array: array.controller_ceiling / PPM),
+        lambda pool: _controller_factors(costs[pool.array]),
     )
 
 
 def array_volumes(date: Date) -> Block:
     """``array-volumes``: volumes on the array."""
-    limited = [a for a in date.estate.arrays if a.volumes_at_most]
-    return _of_arrays(
+    arrays = [array for array in date.estate.arrays if array.volumes_at_most]
+    return _block(
         date,
-        "array-volumes",
-        [a.name for a in limited],
-        date.still() + 1,
+        Kind("array-volumes", "volumes"),
+        np.ones((len(date.estate.volumes), 1, 1)),
+        _by_array(date, arrays, lambda array: float(array.volumes_at_most)),
         lambda _: (1.0,),
-        [float(a.volumes_at_most) for a in limited],
-        unit="volumes",
     )
 
 
@@ -174,6 +155,71 @@ RULES: tuple[Callable[[Date], Block], ...] = (
 )
 
 
+@dataclass(frozen=True, slots=True)
+class Kind:
+    """Rule of a block, unit of its report, and the limit's own units in one of it."""
+
+    code: str
+    unit: str
+    scale: float = 1.0
+
+
+@dataclass(frozen=True, slots=True)
+class Owners:
+    """Whose limits: what each owner is allowed by steps, and the owner of a pool."""
+
+    limits: Mapping[str, Sequence[float]]
+    of: Callable[[Pool], str]
+
+
+def _by_pool(
+    date: Date, pools: Sequence[Pool], limit: Callable[[Pool, int], float | Fraction]
+) -> Owners:
+    steps = range(date.most_steps + 1)
+    limits = {p.id: [float(limit(p, min(k, _steps(p)))) for k in steps] for p in pools}
+    return Owners(limits, lambda pool: pool.id)
+
+
+def _by_array(
+    date: Date, arrays: Sequence[Array], limit: Callable[[Array], float]
+) -> Owners:
+    """Expansion of pools does not change what an array is allowed."""
+    limits = {a.name: [limit(a)] * (date.most_steps + 1) for a in arrays}
+    return Owners(limits, lambda pool: pool.array)
+
+
+def _block(
+    date: Date,
+    kind: Kind,
+    asks: Floats,
+    owners: Owners,
+    cost: Callable[[Pool], Factors],
+    move_cost: Callable[[Pool], float] = lambda _: 0.0,
+) -> Block:
+    names = tuple(owners.limits)
+    held = [owners.of(pool) for pool in date.estate.pools]
+    nothing: Factors = (0.0,) * asks.shape[2]
+    pools = list(zip(held, date.estate.pools, strict=True))
+    return Block(
+        code=kind.code,
+        owners=names,
+        owner_of=np.array(
+            [names.index(o) if o in owners.limits else NOBODY for o in held],
+            dtype=np.int64,
+        ),
+        asks=asks,
+        costs=np.array([cost(p) if o in owners.limits else nothing for o, p in pools]),
+        limits=np.array([owners.limits[name] for name in names]),
+        home=date.home,
+        moved=date.copied,
+        move_costs=np.array(
+            [move_cost(p) if o in owners.limits else 0.0 for o, p in pools]
+        ),
+        unit=kind.unit,
+        scale=kind.scale,
+    )
+
+
 def _steps(pool: Pool) -> int:
     return pool.expansion.at_most if pool.expansion else 0
 
@@ -182,73 +228,15 @@ def _has_room_row(pool: Pool) -> bool:
     return pool.takes_volumes or capacity.usable(pool) > 0
 
 
-def _busy_factors(pool: Pool) -> tuple[float, ...]:
-    cost = drives.busy_cost(pool)
+def _busy_at_most(pool: Pool, steps: int) -> float:
+    return pool.busy_ceiling / PPM * drives.busy_drives(pool, steps)
+
+
+def _factors(cost: drives.BusyCost | None) -> Factors:
     assert cost
     return cost.read, cost.write, cost.read_byte, cost.write_byte
 
 
-def _of_pools(  # noqa: PLR0913
-    date: Date,
-    code: str,
-    pools: Sequence[Pool],
-    asks: Floats,
-    cost: Callable[[Pool], tuple[float, ...]],
-    limit: Callable[[Pool, int], float],
-    *,
-    move_cost: Callable[[Pool], float] = lambda _: 0.0,
-    unit: str,
-    scale: float = 1.0,
-) -> Block:
-    """Build a block whose owners are pools."""
-    every = date.estate.pools
-    index = {pool.id: i for i, pool in enumerate(pools)}
-    nothing = (0.0,) * asks.shape[2]
-    return Block(
-        code=code,
-        owners=tuple(index),
-        owner_of=np.array([index.get(p.id, NOBODY) for p in every], dtype=np.int64),
-        asks=asks,
-        costs=np.array([cost(p) if p.id in index else nothing for p in every]),
-        limits=np.array(
-            [
-                [limit(p, min(k, _steps(p))) for k in range(date.most_steps + 1)]
-                for p in pools
-            ]
-        ),
-        home=date.home,
-        moved=date.copied,
-        move_costs=np.array([move_cost(p) if p.id in index else 0.0 for p in every]),
-        unit=unit,
-        scale=scale,
-    )
-
-
-def _of_arrays(  # noqa: PLR0913
-    date: Date,
-    code: str,
-    arrays: Sequence[str],
-    asks: Floats,
-    cost: Callable[[Pool], tuple[float, ...]],
-    limit: Sequence[float],
-    *,
-    unit: str,
-    scale: float = 1.0,
-) -> Block:
-    """Build a block whose owners are arrays; expansion of pools does not change it."""
-    every = date.estate.pools
-    index = {name: i for i, name in enumerate(arrays)}
-    nothing = (0.0,) * asks.shape[2]
-    return Block(
-        code=code,
-        owners=tuple(index),
-        owner_of=np.array([index.get(p.array, NOBODY) for p in every], dtype=np.int64),
-        asks=asks,
-        costs=np.array([cost(p) if p.array in index else nothing for p in every]),
-        limits=np.repeat(np.array(limit)[:, None], date.most_steps + 1, axis=1),
-        home=date.home,
-        moved=date.copied,
-        move_costs=np.zeros(len(every)),
-        unit=unit,
-        scale=scale,
-    )
+def _controller_factors(cost: controllers.ControllerCost | None) -> Factors:
+    assert cost
+    return cost.read, cost.write, cost.byte, cost.byte

@@ -9,8 +9,9 @@ from placer.candidates.table import Candidates
 from placer.placement import goals, rows, shortage
 from placer.placement.layout import Layout, layout
 from placer.placement.reasons import reasons
-from placer.placement.search import Found, Halted, Progress, at_solution, search
+from placer.placement.search import NEAR_ENOUGH, Found, at_solution, search
 from placer.placement.settle import settle
+from placer.placement.watch import UNWATCHED, Watch
 from placer.plan import Goal, Reason, Shortage
 
 
@@ -53,8 +54,8 @@ class Nothing:
 def place(
     candidates: Candidates,
     seconds: float,
-    progress: Progress = lambda _: None,
-    halted: Halted = lambda: False,
+    watch: Watch = UNWATCHED,
+    near_enough: float = NEAR_ENOUGH,
 ) -> Placement | Nothing:
     """Solve the placement of an estate.
 
@@ -64,10 +65,10 @@ def place(
         The table of the estate.
     seconds
         [s] time for the search.
-    progress
-        Told of each goal when it is solved.
-    halted
-        Asked between steps; once true, the best so far is kept.
+    watch
+        Told of each goal when it is solved, asked between steps whether to halt.
+    near_enough
+        [1] distance from the bound at which a goal needs no more search.
     """
     homeless = shortage.homeless(candidates)
     if homeless:
@@ -75,7 +76,8 @@ def place(
     plan = layout(candidates)
     program = rows.program(plan)
     start = _staying(plan)
-    found = search(program, goals.costs(plan), seconds, start, progress, halted)
+    costs = goals.costs(plan)
+    found = search(program, costs, seconds, start, watch, near_enough)
     if found.x is None:
         return _nothing(plan, seconds, timed_out=not found.impossible)
     return _placement(plan, found)

@@ -1,7 +1,6 @@
 """The search: goal after goal, each within what the ones before it reached."""
 
 import time
-from collections.abc import Callable
 from dataclasses import dataclass, replace
 
 import numpy as np
@@ -11,15 +10,13 @@ from placer.placement import solver
 from placer.placement.chain import Chain, worthwhile
 from placer.placement.goals import Cost
 from placer.placement.matrix import Program, RowKey
+from placer.placement.watch import UNWATCHED, Watch
 from placer.plan import Goal, Stopped
 
 NEAR_ENOUGH = 5e-4
 PROVEN = 1e-6
 ROUNDING = 1e-9
 CHAIN_SHARE = 0.4
-
-Progress = Callable[[Goal], None]
-Halted = Callable[[], bool]
 
 
 @dataclass(frozen=True)
@@ -40,8 +37,8 @@ def search(
     costs: tuple[Cost, ...],
     seconds: float,
     start: Floats | None = None,
-    progress: Progress = lambda _: None,
-    halted: Halted = lambda: False,
+    watch: Watch = UNWATCHED,
+    near_enough: float = NEAR_ENOUGH,
 ) -> Found:
     """Solve the goals in order.
 
@@ -55,35 +52,42 @@ def search(
         [s] time for all goals together; what one leaves over goes to the next.
     start
         A solution to begin with, if one is known.
-    progress
-        Told of each goal when it is done.
-    halted
-        Asked between steps; once true, the best so far is kept.
+    watch
+        Told of each goal when it is done, asked between steps whether to halt.
+    near_enough
+        [1] relative distance from the bound at which a goal needs no more search.
     """
     deadline = time.monotonic() + seconds
     x = start if start is not None and program.holds(start) else None
     goals: list[Goal] = []
     for number, cost in enumerate(costs):
         share = (deadline - time.monotonic()) / (len(costs) - number)
-        answer = OneGoal(program, cost, max(share, 1.0), halted).solve(x)
+        effort = Effort(max(share, 1.0), near_enough, watch)
+        answer = OneGoal(program, cost, effort).solve(x)
         if answer.x is None:
             return Found(None, tuple(goals), program, answer.impossible)
         x = answer.x
-        goals.append(_goal(cost, answer, halted()))
-        progress(goals[-1])
+        goals.append(_goal(cost, answer, watch.halted()))
+        watch.tell(goals[-1])
         if number < len(costs) - 1:
             program = _kept(program, cost, x)
     return Found(x, tuple(goals), program)
 
 
+@dataclass(frozen=True)
+class Effort:
+    """How long to search for one goal, and what ends it earlier."""
+
+    seconds: float
+    near_enough: float
+    watch: Watch
+
+
 class OneGoal:
     """The search for one goal: relaxation, first solution, chain, exact finish."""
 
-    def __init__(
-        self, program: Program, cost: Cost, seconds: float, halted: Halted
-    ) -> None:
-        self._program, self._cost, self._seconds = program, cost.vector, seconds
-        self._halted = halted
+    def __init__(self, program: Program, cost: Cost, effort: Effort) -> None:
+        self._program, self._cost, self._effort = program, cost.vector, effort
         self._begin = time.monotonic()
 
     def solve(self, start: Floats | None) -> solver.Answer:
@@ -96,7 +100,7 @@ class OneGoal:
             best = self._joined(self._chained(relaxed, best), best)
         if best.x is None:
             return self._joined(self._whole(), best)
-        if self._far(best, NEAR_ENOUGH):
+        if self._far(best, self._effort.near_enough):
             best = self._joined(self._finish(relaxed, best), best)
         return best
 
@@ -108,13 +112,15 @@ class OneGoal:
         better = self._joined(replace(best, x=first), best)
         if better.x is None:
             return better
-        target = best.bound + NEAR_ENOUGH / 2 * abs(best.bound)
+        target = best.bound + self._effort.near_enough / 2 * abs(best.bound)
         return replace(better, x=chain.improve(better.x, deadline, target))
 
     def _whole(self) -> solver.Answer:
         """Give the whole program to the solver: no solution is known."""
         seconds = max(1.0, self._left())
-        return solver.solve(self._program, self._cost, seconds=seconds, gap=NEAR_ENOUGH)
+        return solver.solve(
+            self._program, self._cost, seconds=seconds, gap=self._effort.near_enough
+        )
 
     def _finish(self, relaxed: solver.Relaxed, best: solver.Answer) -> solver.Answer:
         """Solve over the columns that can still be part of something better."""
@@ -123,7 +129,11 @@ class OneGoal:
         small = self._program.restricted(free, best.x)
         seconds = max(1.0, self._left())
         answer = solver.solve(
-            small, self._cost[free], seconds=seconds, hint=best.x[free], gap=NEAR_ENOUGH
+            small,
+            self._cost[free],
+            seconds=seconds,
+            hint=best.x[free],
+            gap=self._effort.near_enough,
         )
         if answer.x is None:
             return replace(answer, impossible=False)
@@ -148,13 +158,13 @@ class OneGoal:
     def _far(self, answer: solver.Answer, gap: float) -> bool:
         if answer.x is None:
             return True
-        if self._halted():
+        if self._effort.watch.halted():
             return False
         value = float(self._cost @ answer.x)
         return value - answer.bound > max(gap * abs(value), ROUNDING)
 
     def _left(self) -> float:
-        return self._seconds - (time.monotonic() - self._begin)
+        return self._effort.seconds - (time.monotonic() - self._begin)
 
 
 def _goal(cost: Cost, answer: solver.Answer, halted: bool) -> Goal:

@@ -115,6 +115,7 @@ def read(path: Path) -> Plan:
         digest=about[planpages.DIGEST],
         version=about[planpages.VERSION],
         status=_status(about[planpages.STATUS]),
+        start=about[planpages.START],
         **{table.fills: tuple(_records(book, table)) for table in TABLES},
     )
 
@@ -123,13 +124,12 @@ def _about(book: Workbook) -> dict[str, str]:
     """Return what identifies the plan, once all sheets it names are there."""
     sheet = _sheet(book, planpages.ABOUT)
     said = {_text(row[0]): row[1] for row in sheet.iter_rows(min_row=2, max_col=2)}
-    names = [planpages.INVENTORY, planpages.DIGEST, planpages.VERSION, planpages.STATUS]
-    missing = [name for name in (*names, planpages.SHEETS) if name not in said]
+    missing = [name for name in planpages.IDENTITY if name not in said]
     if missing:
         raise PlanFileError(f"Sheet about lacks the setting {missing[0]}.")
     for title in _text(said[planpages.SHEETS]).split("; "):
         _sheet(book, title)
-    return {name: _text(said[name]) for name in names}
+    return {name: _text(said[name]) for name in planpages.IDENTITY}
 
 
 def _sheet(book: Workbook, title: str) -> Worksheet:

@@ -30,6 +30,8 @@ Pair = tuple[str, object, Kind]
 ABOUT = "about"
 DIGEST, VERSION, STATUS, INVENTORY = "digest", "version", "status", "inventory"
 SHEETS = "sheets"
+START = "start date"
+IDENTITY = (INVENTORY, DIGEST, VERSION, STATUS, START, SHEETS)
 
 _NIGHT: Sequence[Heading] = (
     ("window", TEXT),
@@ -173,6 +175,7 @@ def _identity(book: Workbook, plan: Plan) -> Iterable[Pair]:
         (DIGEST, plan.digest, TEXT),
         (VERSION, plan.version, TEXT),
         (STATUS, plan.status.value, TEXT),
+        (START, plan.start, TEXT),
         ("search ended", stopped(plan).value, TEXT),
         (SHEETS, "; ".join(book.sheetnames), TEXT),
     )

@@ -2,6 +2,7 @@
 
 import json
 import shutil
+from datetime import datetime, timedelta, tzinfo
 from pathlib import Path
 from zipfile import ZipFile
 
@@ -13,6 +14,14 @@ from placer.cli import Exit, main
 
 ROOT = Path(__file__).parents[2]
 INVENTORIES = ROOT / "inventories"
+
+
+class NextYear(datetime):
+    """A clock that is a year ahead."""
+
+    @classmethod
+    def now(cls, tz: tzinfo | None = None) -> "NextYear":
+        return super().now(tz) + timedelta(days=365)
 
 
 def run(*arguments: str | Path) -> Result:
@@ -106,7 +115,9 @@ def test_a_messy_inventory_is_not_planned(tmp_path: Path) -> None:
     assert list(tmp_path.iterdir()) == []
 
 
-@pytest.mark.parametrize("name", ["missing.xlsx", "empty.xlsx", "cut.xlsx", "words.xlsx"])
+@pytest.mark.parametrize(
+    "name", ["missing.xlsx", "empty.xlsx", "cut.xlsx", "words.xlsx"]
+)
 def test_what_is_no_workbook_gets_one_clear_sentence(name: str, tmp_path: Path) -> None:
     whole = (INVENTORIES / "harbour.xlsx").read_bytes()
     contents = {"empty.xlsx": b"", "cut.xlsx": whole[: len(whole) // 2]}
@@ -127,7 +138,9 @@ def test_an_audit_of_no_plan_is_one_clear_sentence(tmp_path: Path) -> None:
     assert result.output.startswith("Error: ")
 
 
-def test_an_empty_inventory_is_written_and_says_that_it_is_empty(tmp_path: Path) -> None:
+def test_an_empty_inventory_is_written_and_says_that_it_is_empty(
+    tmp_path: Path,
+) -> None:
     file = tmp_path / "mine.xlsx"
     assert run("blank", file).exit_code == Exit.DONE
     result = run("check", file)
@@ -138,3 +151,15 @@ def test_an_empty_inventory_is_written_and_says_that_it_is_empty(tmp_path: Path)
 def test_wrong_use_exits_with_two() -> None:
     assert run("plan").exit_code == 2
     assert run("sail").exit_code == 2
+
+
+def test_a_plan_without_a_start_date_still_audits_on_a_later_day(
+    tmp_path: Path, monkeypatch: pytest.MonkeyPatch
+) -> None:
+    """The plan remembers its first day, so the audit reads the same estate."""
+    undated = INVENTORIES / "harbour-least.xlsx"
+    planned = run("plan", undated, "--output", tmp_path)
+    assert planned.exit_code in (Exit.DONE, Exit.NO_PLAN), planned.output
+    monkeypatch.setattr("placer.workbook.intake.datetime", NextYear)
+    result = run("audit", undated, tmp_path / "harbour-least-plan.xlsx")
+    assert result.exit_code == Exit.DONE, result.output

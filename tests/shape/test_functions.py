@@ -42,6 +42,6 @@ def test_no_function_has_more_than_60_lines() -> None:
     assert {name: n for name, n in LENGTHS.items() if n > 60} == {}
 
 
-def test_no_file_has_more_than_350_lines() -> None:
+def test_no_file_has_more_than_400_lines() -> None:
     lines = {p.name: len(p.read_text(encoding="utf-8").splitlines()) for p in FILES}
-    assert {name: n for name, n in lines.items() if n > 350} == {}
+    assert {name: n for name, n in lines.items() if n > 400} == {}

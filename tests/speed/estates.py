@@ -1,8 +1,8 @@
 """Seeded estates of any size with tight limits, for measuring the search.
 
-A hidden placement is drawn first; every limit is its use and 5 to 8 percent more, in all
-hours the same.  Today's placement is the hidden one with 38 % of the bytes thrown about,
-so most pools are over a limit today and a plan is known to exist.
+A hidden placement is drawn first; every limit is its use and 5 to 8 percent more, in
+all hours the same.  Today's placement is the hidden one with 38 % of the bytes thrown
+about, so most pools are over a limit today and a plan is known to exist.
 """
 
 from dataclasses import dataclass, replace
@@ -81,7 +81,7 @@ def _profile(rng: np.random.Generator) -> Floats:
 
 
 def _hidden(rng: np.random.Generator, drawn: Draw, pools: int) -> Ints:
-    """Place the hottest per GiB on flash up to 22 % of the bytes, the rest elsewhere."""
+    """Place the hottest per GiB on flash up to 22 % of the bytes, others elsewhere."""
     flash = max(1, pools // 3)
     weight = np.array([WEIGHTS[name] for name in drawn.importance])
     heat = np.log(weight * drawn.requests / drawn.size)
