@@ -36,7 +36,7 @@ def room(candidates: Candidates, places: Ints, groups: Sequence[Sequence[int]]) 
     def used(block: Block, rows: Iterable[int], columns: Ints) -> Floats:
         total = np.zeros(len(block.owners))
         for row in rows:
-            owner = block.owner(row, int(columns[row]))
+            owner = int(block.owner_of[columns[row]])
             if owner >= 0:
                 total[owner] += block.column(row, int(columns[row]))[0]
         return total
