@@ -214,6 +214,69 @@ def test_the_hold_counts_from_the_uncut_window() -> None:
         assert case.broken == set()
 
 
+def test_room_is_taken_from_the_first_piece_on() -> None:
+    """X is copied in nights 1 to 3; y is released as night 3 opens, and only then has
+    g room beside x, though the copy of x is not yet done.
+    """
+    y = of_bytes(volume("y", "b/new", 1), 600, hold=2)
+    made = small(one(7_000, name="x"), one(600, name="g"), y)
+    two = pool("b/new", Media.SPINNING, 7_200)
+    made = replace(made, pools=(made.pools[0], two))
+    case = booked(made, {"y": "a/old", "x": "b/new", "g": "b/new"}, order="yxg")
+    assert case.moves["x"].starts < case.moves["y"].released < case.moves["x"].ends
+    assert case.moves["g"].starts >= case.moves["y"].released
+    assert case.broken == set()
+
+
+def test_pieces_of_one_copy_never_overlap() -> None:
+    """Two windows share two of nine hours: 420 minutes before the last cutover."""
+    early = window(1, 4)
+    late = replace(window(1), name="late", night="late", start=early.start + 120)
+    for minutes, moved in ((420, True), (425, False)):
+        case = booked(small(one(6 * minutes), windows=(early, late)), WAY)
+        assert bool(case.moves) == moved
+        assert case.broken == set()
+
+
+def test_a_cutover_is_in_a_window_of_its_arrays() -> None:
+    """The copy fits before a short night ends; the next night is for others."""
+    nights = (
+        replace(window(1), end=window(1).start + 59),
+        replace(window(2), arrays=("a",)),
+        window(3),
+    )
+    case = booked(small(one(6), windows=nights), WAY)
+    assert case.moves["x"].window == "night 3"
+    assert case.broken == set()
+
+
+def test_what_was_tried_in_vain_leaves_nothing_behind() -> None:
+    """One copy at a time, three nights' work: nights 1 and 2 alone do not do."""
+    crowd = [one(6 * 415, "mail", name=name) for name in "xyz"]
+    made = small(*crowd)
+    arrays = tuple(replace(array, copies_at_once=1) for array in made.arrays)
+    case = booked(replace(made, arrays=arrays), dict.fromkeys("xyz", "b/new"))
+    assert {move.window for move in case.schedule.moves} == {"night 3"}
+    assert {each.window for each in case.schedule.bookings} == {
+        "night 1",
+        "night 2",
+        "night 3",
+    }
+    assert case.broken == set()
+
+
+def test_the_longest_copy_of_an_application_is_booked_first() -> None:
+    """Copies of 1, 1 and 2 hours, two at a time: 2 hours, and 3 the other way."""
+    crowd = [
+        one(360 * n, "mail", name=name)
+        for name, n in zip("xyz", (1, 1, 2), strict=True)
+    ]
+    made = small(*crowd)
+    arrays = tuple(replace(array, copies_at_once=2) for array in made.arrays)
+    case = booked(replace(made, arrays=arrays), dict.fromkeys("xyz", "b/new"))
+    assert case.moves["x"].cutover == window(1).start + 120
+
+
 def lost(case: Case) -> set[str]:
     """Return what is neither moved nor left over."""
     done = {m.volume for m in case.schedule.moves} | {
