@@ -7,7 +7,7 @@ import numpy as np
 from placer.candidates.block import Block, Floats, Ints
 from placer.candidates.table import Candidates
 from placer.schedule.level import ALWAYS, Level
-from placer.windows.clock import days_later
+from placer.units import MINUTES_PER_DAY
 
 ROOM = ("pool-room", "pool-thin", "array-volumes")
 LOAD = ("pool-busy", "controller-busy")
@@ -108,10 +108,10 @@ def _bounds(
 
 
 def _delivery(candidates: Candidates, bought: Ints, owner: str) -> tuple[int, int]:
-    """Return when a pool's expansion is there [min] and its steps."""
+    """Return when a pool's expansion is there, days of 24 hours on, and its steps."""
     policy = candidates.estate.policy
     for pool, steps in zip(candidates.pools, bought, strict=True):
         if pool.id == owner and pool.expansion and steps:
             days = pool.expansion.delivery_days
-            return days_later(policy.start, days, policy.zone), int(steps)
+            return policy.start + days * MINUTES_PER_DAY, int(steps)
     return ALWAYS, 0

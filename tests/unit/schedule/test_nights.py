@@ -184,6 +184,29 @@ def test_room_bought_is_there_from_its_delivery_on() -> None:
     assert case.broken == set()
 
 
+def test_days_of_delivery_have_24_hours_in_any_season() -> None:
+    """Berlin loses an hour on 28 March 2027: ten days later it is one in the morning."""
+    zone = ZoneInfo("Europe/Berlin")
+
+    def at(text: str) -> int:
+        return int(datetime.fromisoformat(text).replace(tzinfo=zone).timestamp()) // 60
+
+    step = Expansion(drives=1, price=0, at_most=1, delivery_days=10)
+    target = replace(pool("b/new", Media.SPINNING, 100), drives=1, expansion=step)
+    opens = at("2027-03-29T22:00")
+    night = replace(window(1), opens=opens, start=opens, end=opens + 480)
+    made = small(volume("x", "a/old", 200), windows=(night,))
+    start = at("2027-03-20T00:00")
+    made = replace(
+        made,
+        pools=(made.pools[0], target),
+        policy=replace(policy(), start=start, earliest=start),
+    )
+    case = booked(made, WAY, bought={"b/new": 1})
+    assert case.moves["x"].starts == at("2027-03-30T01:00")
+    assert case.broken == set()
+
+
 # IANA time zone data: Berlin, 28 March and 31 October 2027 (Directive 2000/84/EC).
 @pytest.mark.parametrize(
     ("opens", "released"),
