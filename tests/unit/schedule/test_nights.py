@@ -185,7 +185,7 @@ def test_room_bought_is_there_from_its_delivery_on() -> None:
 
 
 def test_days_of_delivery_have_24_hours_in_any_season() -> None:
-    """Berlin loses an hour on 28 March 2027: ten days later it is one in the morning."""
+    """Berlin loses an hour on 28 March 2027: ten days later it is one at night."""
     zone = ZoneInfo("Europe/Berlin")
 
     def at(text: str) -> int:
