@@ -87,6 +87,8 @@ class Volume:
     """A volume, where it is today, and what is asked of it.
 
     ``load`` has one entry per hour of the estate.  ``response_limit`` 0 means none.
+    ``random_reads`` and ``read_hits`` are shares of the reads [ppm]; ``snapshots`` [B]
+    take room beside the volume and are not copied with it.
     """
 
     array: str
@@ -99,6 +101,11 @@ class Volume:
     profiled: bool = False
     host: str = ""
     applications: tuple[str, ...] = ()
+    tenant: str = ""
+    random_reads: int = 1_000_000
+    read_hits: int = 0
+    snapshots: int = 0
+    snapshot_days: int = 0
     service_class: str = ""
     response_measured: int = 0
     response_limit: int = 0
@@ -137,7 +144,8 @@ class Pool:
     Zero means "not limited" for ``reads_at_most``, ``writes_at_most`` [1/1000 s per
     drive], ``drive_rate`` [B/s per drive], ``thin_at_most`` [ppm], ``requests_at_most``
     [1/1000 s, whole pool] and ``dwpd`` [ppm, drive writes per day]; times are [µs],
-    sizes [B], shares and ratios [ppm].
+    sizes [B], shares and ratios [ppm].  ``busy_measured`` 0 means not measured;
+    ``measured_factor`` is what measured times are of modelled ones.
     """
 
     array: str
@@ -168,6 +176,9 @@ class Pool:
     array_overhead: int = 1_100_000
     rpm: int = 0
     seek: int = 0
+    prefetch_unit: int = 2**20
+    busy_measured: int = 0
+    measured_factor: int = 1_000_000
     requests_at_most: int = 0
     expansion: Expansion | None = None
     place: Place = Place()
@@ -188,7 +199,7 @@ class Array:
     """Controllers and front end.  Zero means "not limited" for every limit.
 
     Requests are [1/1000 s] and rates [B/s] per controller; copy rates [B/s] are of the
-    whole array; shares and ratios [ppm]; ``write_answer`` [µs].
+    whole array; shares and ratios [ppm]; answers [µs]; ``cache`` [B], 0 unknown.
     """
 
     name: str
@@ -201,6 +212,9 @@ class Array:
     controller_ceiling: int = 700_000
     uneven: int = 1_150_000
     write_answer: int = 0
+    read_hit_answer: int = 0
+    cache: int = 0
+    busy_measured: int = 0
     one_copy: int = 0
     copies_in: int = 0
     copies_out: int = 0
@@ -217,6 +231,21 @@ class Host:
 
     name: str
     arrays: tuple[str, ...] = ()
+    place: Place = Place()
+
+
+@dataclass(frozen=True, slots=True, kw_only=True)
+class Tenant:
+    """Caps of a tenant: [1/1000 s] and [B/s], 0 where not capped.
+
+    With ``plan_for_cap`` the plan provides what the tenant may ask for, not what was
+    measured.
+    """
+
+    name: str
+    requests_cap: int = 0
+    rate_cap: int = 0
+    plan_for_cap: bool = False
     place: Place = Place()
 
 
@@ -341,6 +370,7 @@ class Estate:
     policy: Policy
     hosts: tuple[Host, ...] = ()
     routes: tuple[Route, ...] = ()
+    tenants: tuple[Tenant, ...] = ()
     rules: tuple[Rule, ...] = ()
     windows: tuple[Window, ...] = ()
     controls: tuple[Control, ...] = ()
