@@ -46,9 +46,11 @@ def book(
     best = _booked(candidates, transfers, bought, progress)
     groups = len({transfer.group for transfer in transfers})
     order = _workable(candidates, transfers, bought) if best.wanting else []
+    tried: list[list[Transfer]] = []
     for _ in range(min(ORDERS_AT_MOST, INSERTIONS_AT_MOST // max(1, groups))):
-        if not best.wanting:
+        if not best.wanting or order in tried:
             break
+        tried.append(order)
         outcome = _booked(candidates, order, bought, progress)
         best = min(best, outcome, key=lambda each: each.value)
         left = {unit.group for unit in outcome.left}
