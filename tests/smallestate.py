@@ -2,6 +2,7 @@
 
 from dataclasses import replace
 
+from placer.candidates.table import candidates
 from placer.estate import (
     Aim,
     Array,
@@ -100,3 +101,10 @@ def estate(
         policy=wishes or policy(),
         windows=tuple(map(window, range(1, 61))) if windows is None else windows,
     )
+
+
+def drives_busy(where: Pool, asked: Load) -> float:
+    """Return how many drives of a pool one volume with a load keeps busy."""
+    table = candidates(estate([volume("one", where.id, 1, asked)], [where]))
+    busy = next(block for block in table.limits_today if block.code == "pool-busy")
+    return float(busy.use(table.home).max())

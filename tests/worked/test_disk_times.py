@@ -4,9 +4,10 @@ OSTEP: R. and A. Arpaci-Dusseau, "Operating Systems: Three Easy Pieces", v0.80, 
 """
 
 import pytest
+from smallestate import drives_busy, load
 
 from placer.estate import Media, Pool
-from placer.physics.drives import busy_cost, half_turn, positioning, transfer
+from placer.physics.drives import half_turn, positioning, transfer
 from placer.units import KB, KIB, MB, MIB, MS, PPM
 
 SECTOR = 512
@@ -61,10 +62,8 @@ def test_a_random_read_of_4_kb(  # the columns of the book's table
 
 def test_a_drive_asked_for_its_random_rate_is_busy_all_the_time() -> None:
     """OSTEP table 37.2: 75.7 reads/s of 4 KB, one after the other, fill the drive."""
-    cost = busy_cost(drive(9, 7_200, 105 * MB))
-    assert cost is not None
-    busy = 75.729 * (cost.read + 4 * KB * cost.read_byte)
-    assert busy == pytest.approx(1.0, abs=1e-4)
+    asked = load(75.729, kib=4 * KB / KIB)
+    assert drives_busy(drive(9, 7_200, 105 * MB), asked) == pytest.approx(1, abs=1e-4)
 
 
 def test_seek_turn_transfer_and_controller_make_6_2_ms() -> None:

@@ -4,12 +4,12 @@ OSTEP: R. and A. Arpaci-Dusseau, "Operating Systems: Three Easy Pieces", v0.80, 
 """
 
 import pytest
+from smallestate import drives_busy, load
 
-from placer.estate import Load, Media, Pool
+from placer.estate import Media, Pool
 from placer.physics.capacity import usable
-from placer.physics.drives import busy_cost, busy_drives
 from placer.physics.protection import stripe_cost, write_cost
-from placer.units import MILLI, PPM, TB
+from placer.units import PPM, TB
 
 N = 8
 NONE, MIRROR, ONE_PARITY, TWO_PARITIES = (1, 0), (1, 1), (N - 1, 1), (N - 2, 2)
@@ -65,18 +65,15 @@ def test_a_drive_that_fills_no_stripe_group_holds_nothing() -> None:
 )
 def test_random_writes(scheme: tuple[int, int], share: float) -> None:
     """OSTEP table 38.7, random write: N R, N R / 2, N R / 4 with R = 100 writes/s."""
-    cost = busy_cost(drives(scheme))
-    assert cost is not None
-    most = busy_drives(drives(scheme)) / cost.write
-    assert most == pytest.approx(share * 100)
+    full = load(0, share * 100, kib=0)
+    assert drives_busy(drives(scheme), full) == pytest.approx(N)
 
 
 def test_random_reads_use_every_drive() -> None:
     """OSTEP table 38.7, random read: N R for all but a drive kept for parity."""
     for scheme in (NONE, MIRROR, ONE_PARITY):
-        cost = busy_cost(drives(scheme))
-        assert cost is not None
-        assert busy_drives(drives(scheme)) / cost.read == pytest.approx(N * 100)
+        full = load(N * 100, kib=0)
+        assert drives_busy(drives(scheme), full) == pytest.approx(N)
 
 
 def test_a_small_write_with_one_parity_is_two_reads_and_two_writes() -> None:
@@ -126,8 +123,5 @@ def test_requests_at_the_drives_from_1000_of_the_hosts(
 
 def test_the_busy_time_of_a_mix_counts_the_requests_at_the_drives() -> None:
     """700 reads and 300 writes on one parity: 1900 requests of 10 ms on 8 drives."""
-    cost = busy_cost(drives(ONE_PARITY))
-    assert cost is not None
-    asked = Load(700 * MILLI, 300 * MILLI, 0, 0)
-    busy = (asked.reads * cost.read + asked.writes * cost.write) / MILLI
-    assert busy == pytest.approx(19.0)
+    asked = load(700, 300, kib=0)
+    assert drives_busy(drives(ONE_PARITY), asked) == pytest.approx(19.0)
