@@ -126,6 +126,11 @@ class Volume:
         """Id of the pool where the volume is now: ``array/pool``."""
         return f"{self.array}/{self.pool}"
 
+    @property
+    def days_held(self) -> int:
+        """Days its source is kept after a move: for the way back and its snapshots."""
+        return max(self.hold_days, self.snapshot_days)
+
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Expansion:

@@ -9,11 +9,13 @@ from itertools import combinations
 import numpy as np
 
 from placer.candidates.table import Candidates
+from placer.candidates.today import Compared, compare
 from placer.candidates.uses import over, uses
 from placer.estate import Rule, RuleKind, Volume
 from placer.findings import Finding, Place, Severity
 from placer.physics import controllers, drives
 from placer.plan import Moment
+from placer.units import PPM
 
 
 def survey(candidates: Candidates) -> tuple[Finding, ...]:
@@ -142,6 +144,32 @@ def _place(candidates: Candidates, owner: str) -> Place:
     return {**arrays, **places}[owner]
 
 
+def model_off(candidates: Candidates) -> Iterator[Finding]:
+    """Say where the model does not explain today, and offer one factor per pool."""
+    for each in compare(candidates):
+        if not each.near:
+            yield Finding(
+                "model-off",
+                Severity.WARNING,
+                _place(candidates, each.where),
+                f"{each.where}: {each.what} was measured at {each.measured:.3g} "
+                f"{each.unit}, the model says {each.modelled:.3g} {each.unit}",
+                _offered(candidates, each),
+            )
+
+
+def _offered(candidates: Candidates, each: Compared) -> str:
+    """Word the remedy: only a pool's busy share has a factor to offer."""
+    if each.what != "pool busy":
+        return "check the ratings, the loads and the times they were measured at"
+    factors = {pool.id: pool.measured_factor for pool in candidates.pools}
+    factor = each.ratio * factors[each.where] / PPM
+    return (
+        f"check drives and loads; or enter measured factor {factor:.2f} for this "
+        "pool, and the plan counts with it"
+    )
+
+
 def no_busy_limit(candidates: Candidates) -> Iterator[Finding]:
     """Say where nothing is known about how busy a pool or its controllers may be."""
     for pool in candidates.pools:
@@ -207,6 +235,7 @@ CHECKS: tuple[Check, ...] = (
     too_large,
     contradictions,
     over_today,
+    model_off,
     no_busy_limit,
     unreached,
     late_windows,

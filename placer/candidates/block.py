@@ -17,9 +17,9 @@ Ints = NDArray[np.int64]
 class Block:
     """Limits of one kind.
 
-    The use of volume v placed in pool p is ``asks[v] @ costs[p]`` in each hour, and
-    ``moved[v] * move_costs[p]`` more in each hour if p is not its home.  It counts for
-    the owner of p.
+    The use of volume v placed in pool p is ``asks[v] @ costs[p]`` in each hour, less
+    ``eased[v, p]`` of ``asks[v] @ ease[p]``, and ``moved[v] * move_costs[p]`` more in
+    each hour if p is not its home.  It counts for the owner of p.
 
     Attributes
     ----------
@@ -31,8 +31,10 @@ class Block:
         (pools,) index into ``owners``, -1 where the pool has none.
     asks
         (volumes, hours, q) what volumes ask for; one hour where hours do not matter.
-    costs
+    costs, ease
         (pools, q).
+    eased
+        (volumes, pools) share of the reads that the array's cache answers.
     limits
         (owners, steps + 1) what is allowed once k expansion steps are bought.
     home
@@ -50,6 +52,8 @@ class Block:
     home: Ints
     moved: Floats
     move_costs: Floats
+    ease: Floats
+    eased: Floats
     unit: str = ""
     scale: float = 1.0
 
@@ -60,13 +64,15 @@ class Block:
 
     def column(self, volume: int, pool: int) -> Floats:
         """Return the use of one volume in one pool, (hours,)."""
-        stay: Floats = self.asks[volume] @ self.costs[pool]
+        eased = self.costs[pool] - self.eased[volume, pool] * self.ease[pool]
+        stay: Floats = self.asks[volume] @ eased
         return stay + self._way(volume, pool)
 
     def use(self, places: Ints) -> Floats:
         """Return the use of each owner and hour, (owners, hours), for a placement."""
         total = np.zeros((len(self.owners), self.hours))
-        per_volume = np.einsum("vhq,vq->vh", self.asks, self.costs[places])
+        eased = self.eased[np.arange(len(places)), places][:, None] * self.ease[places]
+        per_volume = np.einsum("vhq,vq->vh", self.asks, self.costs[places] - eased)
         away = places != self.home
         per_volume += (self.moved * self.move_costs[places] * away)[:, None]
         owners = self.owner_of[places]

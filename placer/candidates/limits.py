@@ -5,7 +5,7 @@ register, for the sizes and loads of a date.
 """
 
 from collections.abc import Callable, Mapping, Sequence
-from dataclasses import dataclass
+from dataclasses import astuple, dataclass
 from fractions import Fraction
 from functools import cached_property
 
@@ -15,9 +15,11 @@ from placer.candidates.block import Block, Floats, Ints
 from placer.candidates.loads import loads
 from placer.estate import Array, Estate, Pool
 from placer.physics import capacity, controllers, demand, drives, flash
+from placer.physics.cache import kept_hits
 from placer.units import GIB, PERCENT, PPM, SECONDS_PER_DAY, TB
 
 NOBODY = -1
+READS = (0, 2, 4, 5)
 
 Factors = tuple[float, ...]
 
@@ -35,14 +37,41 @@ class Date:
         return loads(self.estate, self.months)
 
     @cached_property
-    def sizes(self) -> Floats:
-        """Room before reduction (volumes,) [B]."""
-        return sizes(self.estate, self.months)
+    def drive_loads(self) -> Floats:
+        """Loads as drives see them (volumes, hours, 6).
+
+        Reads, writes, bytes of each, random reads, and bytes of sequential reads.
+        """
+        random = np.array([v.random_reads / PPM for v in self.estate.volumes])[:, None]
+        reads, read_bytes = self.loads[:, :, 0], self.loads[:, :, 2]
+        kinds = np.stack([reads * random, read_bytes * (1 - random)], axis=2)
+        return np.concatenate([self.loads, kinds], axis=2)
+
+    @cached_property
+    def room(self) -> Floats:
+        """Room before reduction, snapshots included (volumes,) [B]."""
+        volumes = self.estate.volumes
+        return np.array([demand.room(v, self.months) for v in volumes], dtype=float)
 
     @cached_property
     def copied(self) -> Floats:
         """What a move carries (volumes,) [B]."""
-        return sizes(self.estate, demand.months_of_nights(self.estate))
+        months = demand.months_of_nights(self.estate)
+        sizes = [demand.size(volume, months) for volume in self.estate.volumes]
+        return np.array(sizes, dtype=float)
+
+    @cached_property
+    def hits(self) -> Floats:
+        """Share of reads that each pool's array answers from its cache."""
+        arrays = {array.name: array for array in self.estate.arrays}
+        shares = [
+            [
+                kept_hits(v.read_hits, arrays[v.array], arrays[p.array])
+                for p in self.estate.pools
+            ]
+            for v in self.estate.volumes
+        ]
+        return np.array(shares).reshape(-1, len(self.estate.pools))
 
     @cached_property
     def home(self) -> Ints:
@@ -54,11 +83,6 @@ class Date:
     def most_steps(self) -> int:
         """Most expansion steps any pool may buy."""
         return max((_steps(pool) for pool in self.estate.pools), default=0)
-
-
-def sizes(estate: Estate, months: int) -> Floats:
-    """Return the room of each volume before reduction [B]."""
-    return np.array([demand.size(v, months) for v in estate.volumes], dtype=float)
 
 
 def limits(estate: Estate, months: int) -> tuple[Block, ...]:
@@ -73,7 +97,7 @@ def pool_room(date: Date) -> Block:
     return _block(
         date,
         Kind("pool-room", "GiB", GIB),
-        date.sizes[:, None, None],
+        date.room[:, None, None],
         _by_pool(date, pools, capacity.room),
         lambda pool: (PPM / pool.reduction,),
     )
@@ -98,8 +122,8 @@ def pool_busy(date: Date) -> Block:
     pools = [pool for pool in date.estate.pools if costs[pool.id]]
     return _block(
         date,
-        Kind("pool-busy", "drives"),
-        date.loads,
+        Kind("pool-busy", "drives", reads=READS),
+        date.drive_loads,
         _by_pool(date, pools, _busy_at_most),
         lambda pool: _factors(costs[pool.id]),
     )
@@ -157,11 +181,15 @@ RULES: tuple[Callable[[Date], Block], ...] = (
 
 @dataclass(frozen=True, slots=True)
 class Kind:
-    """Rule of a block, unit of its report, and the limit's own units in one of it."""
+    """Rule of a block, unit of its report, and the limit's own units in one of it.
+
+    ``reads`` tells which of the asks a read hit spares the owner.
+    """
 
     code: str
     unit: str
     scale: float = 1.0
+    reads: tuple[int, ...] = ()
 
 
 @dataclass(frozen=True, slots=True)
@@ -200,6 +228,8 @@ def _block(
     held = [owners.of(pool) for pool in date.estate.pools]
     nothing: Factors = (0.0,) * asks.shape[2]
     pools = list(zip(held, date.estate.pools, strict=True))
+    costs = np.array([cost(p) if o in owners.limits else nothing for o, p in pools])
+    spared = np.isin(np.arange(asks.shape[2]), kind.reads)
     return Block(
         code=kind.code,
         owners=names,
@@ -208,7 +238,9 @@ def _block(
             dtype=np.int64,
         ),
         asks=asks,
-        costs=np.array([cost(p) if o in owners.limits else nothing for o, p in pools]),
+        costs=costs,
+        ease=costs * spared,
+        eased=date.hits,
         limits=np.array([owners.limits[name] for name in names]),
         home=date.home,
         moved=date.copied,
@@ -234,7 +266,7 @@ def _busy_at_most(pool: Pool, steps: int) -> float:
 
 def _factors(cost: drives.BusyCost | None) -> Factors:
     assert cost
-    return cost.read, cost.write, cost.read_byte, cost.write_byte
+    return astuple(cost)
 
 
 def _controller_factors(cost: controllers.ControllerCost | None) -> Factors:

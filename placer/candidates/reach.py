@@ -5,8 +5,8 @@ from dataclasses import dataclass
 from functools import cached_property
 
 from placer.estate import Array, Estate, Host, Pool, Route, Rule, RuleKind, Volume
+from placer.physics import demand
 from placer.physics.capacity import landed, room
-from placer.physics.demand import size
 
 
 @dataclass(frozen=True, slots=True)
@@ -83,7 +83,7 @@ class Reach:
         if not pool.takes_volumes:
             yield Refusal("source-only", f"{pool.media} pools only give volumes away")
         most = room(pool, pool.expansion.at_most if pool.expansion else 0)
-        if landed(size(volume, self._months), pool) > most:
+        if landed(demand.room(volume, self._months), pool) > most:
             yield Refusal("pool-room", "larger than the whole pool may hold")
 
     def _by_crossing(self, volume: Volume, pool: Pool) -> Iterator[Refusal]:

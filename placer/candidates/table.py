@@ -12,6 +12,7 @@ from placer.candidates.limits import Date, limits
 from placer.candidates.reach import Reach
 from placer.estate import Estate, Pool, Volume
 from placer.physics.demand import months_of_nights
+from placer.units import MS
 
 
 @dataclass(frozen=True)
@@ -94,7 +95,7 @@ def candidates(estate: Estate) -> Candidates:
         responses=responses,
         allowed=allowed,
         missed=_missed(estate, promised),
-        relief=_relief(estate, promised, date.home),
+        relief=_relief(estate, promised, responses),
         effort=_effort(estate, date),
     )
 
@@ -126,15 +127,15 @@ def _missed(estate: Estate, promised: Ints) -> Floats:
     return np.array(table, dtype=float)
 
 
-def _relief(estate: Estate, promised: Ints, home: Ints) -> Floats:
-    table = [
-        [
-            worth.relief(v, int(promised[i, home[i]]), int(then), estate.policy)
-            for then in promised[i]
-        ]
-        for i, v in enumerate(estate.volumes)
+def _relief(estate: Estate, promised: Ints, responses: worth.Responses) -> Floats:
+    """Weigh what each request gains by importance and requests of the busiest hour."""
+    gains = [
+        [worth.gain(today, int(then), estate.policy) for then in promised[i]]
+        for i, today in enumerate(responses.today)
     ]
-    return np.array(table, dtype=float)
+    weights = np.array([volume.importance.weight for volume in estate.volumes])
+    weighed: Floats = np.array(gains) / MS * (weights * responses.requests)[:, None]
+    return weighed
 
 
 def _effort(estate: Estate, date: Date) -> Floats:

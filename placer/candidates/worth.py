@@ -12,7 +12,7 @@ from placer.candidates.limits import Date, pool_busy
 from placer.estate import Estate, Policy, Pool, Volume
 from placer.physics import drives, queueing
 from placer.physics.demand import busiest_hour
-from placer.units import GIB, MILLI, MS, PPM
+from placer.units import GIB, MILLI, PPM
 
 STEPS_AT_MOST = 10
 STEP = 10
@@ -24,7 +24,15 @@ def whole_microseconds(time: float) -> int:
 
 
 class Responses:
-    """Responses of an estate's volumes in its pools, with the loads of today."""
+    """Responses of an estate's volumes in its pools, with the loads of today.
+
+    Attributes
+    ----------
+    today, modelled_today
+        Response of each volume where it is [us]: measured where it was, and modelled.
+    requests
+        (volumes,) requests of the busiest hour, within the caps [1/s].
+    """
 
     def __init__(self, estate: Estate) -> None:
         self._estate = estate
@@ -32,15 +40,33 @@ class Responses:
         self._date = Date(estate, 0)
         self._busy: Block = pool_busy(self._date)
         self._peak = [busiest_hour(volume) for volume in estate.volumes]
+        every = range(len(estate.volumes))
+        self.requests = self._date.loads[every, self._peak, :2].sum(axis=1)
         no_steps = np.zeros(len(estate.pools), dtype=np.int64)
-        self.today = self._today(self.shares(self._date.home, no_steps))
+        shares = self.shares(self._date.home, no_steps)
+        self.modelled_today = [
+            self.at(v, int(p), shares[p, self._peak[v]])
+            for v, p in enumerate(self._date.home)
+        ]
+        self.today = [
+            volume.response_measured or modelled
+            for volume, modelled in zip(
+                estate.volumes, self.modelled_today, strict=True
+            )
+        ]
 
     def at(self, volume: int, pool: int, busy: float) -> int:
         """Return the mean response in the busiest hour at a busy share of the pool."""
         record = self._estate.pools[pool]
-        load = self._estate.volumes[volume].load[self._peak[volume]]
+        asked = self._estate.volumes[volume]
+        load = asked.load[self._peak[volume]]
+        reads = queueing.Reads(
+            size=load.read_bytes * MILLI / load.reads if load.reads else 0.0,
+            random=asked.random_reads / PPM,
+            hits=float(self._date.hits[volume, pool]),
+        )
         array = self._arrays[record.array]
-        return whole_microseconds(queueing.response(load, record, array, busy))
+        return whole_microseconds(queueing.response(load, reads, record, array, busy))
 
     def shares(self, places: Ints, steps: Ints) -> Floats:
         """Return the busy share of every pool and hour, (pools, hours)."""
@@ -67,12 +93,6 @@ class Responses:
             return measured
         return self.at(volume, pool, busy)
 
-    def _today(self, shares: Floats) -> list[int]:
-        return [
-            self._planned_one(v, int(p), shares[p, self._peak[v]])
-            for v, p in enumerate(self._date.home)
-        ]
-
 
 def promised(responses: Responses, volume: int, pool: int, record: Pool) -> int:
     """Return the response a move promises: with the new pool at its busy ceiling."""
@@ -89,17 +109,16 @@ def steps_missed(volume: Volume, response: int, policy: Policy) -> int:
     return min(STEPS_AT_MOST, -(-over // (limit * PPM)))
 
 
-def relief(volume: Volume, today: int, then: int, policy: Policy) -> float:
-    """Return weighted waiting saved per second [ms/s]; a loss is negative.
+def gain(today: int, then: int, policy: Policy) -> int:
+    """Return the waiting a request is saved [us] as far as it counts.
 
-    A gain below the least gain counts nothing, so nobody moves for microseconds.
+    A gain below the least gain counts nothing, so nobody moves for microseconds; a loss
+    counts whole; where either response is unknown there is neither.
     """
-    gain = today - then
-    if not today or not then or 0 <= gain * PPM < policy.least_gain * today:
-        return 0.0
-    load = volume.load[busiest_hour(volume)]
-    requests = (load.reads + load.writes) / MILLI
-    return volume.importance.weight * requests * gain / MS
+    saved = today - then
+    if not today or not then or 0 <= saved * PPM < policy.least_gain * today:
+        return 0
+    return saved
 
 
 def effort(copied: float, policy: Policy) -> float:

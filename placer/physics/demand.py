@@ -38,6 +38,11 @@ def size(volume: Volume, months: int) -> int:
         return min(volume.provisioned, demand(volume.occupied * factor))
 
 
+def room(volume: Volume, months: int) -> int:
+    """Return the room [B] before reduction that a volume takes with its snapshots."""
+    return size(volume, months) + volume.snapshots
+
+
 def months_of_nights(estate: Estate) -> int:
     """Return the 30-day months begun until the last window ends; 0 without windows."""
     if not estate.windows:

@@ -1,8 +1,8 @@
 """Busy time of drives: what one host read or write costs a pool.
 
-The busy time of a pool is linear in what its volumes ask for: reads/s, writes/s and the
-bytes of both.  ``busy_cost`` gives the four factors, so that a pool's busy time is a
-scalar product whoever computes it.
+The busy time of a pool is linear in what its volumes ask for: reads/s, writes/s, the
+bytes of both, and which reads are random.  ``busy_cost`` gives the factors, so that a
+pool's busy time is a scalar product whoever computes it.
 
 References
 ----------
@@ -10,7 +10,7 @@ References
    T = seek + half a turn + transfer.
 """
 
-from dataclasses import dataclass
+from dataclasses import astuple, dataclass
 
 from placer.estate import Media, Pool
 from placer.physics import protection
@@ -22,12 +22,18 @@ MICRO = 1_000_000
 
 @dataclass(frozen=True, slots=True)
 class BusyCost:
-    """Drives kept busy per unit of load: per read/s, write/s, and byte/s of each."""
+    """Drives kept busy per unit of load.
+
+    Per read/s and write/s of any kind, per byte/s of each, per random read/s, and per
+    byte/s of sequential reads.
+    """
 
     read: float
     write: float
     read_byte: float
     write_byte: float
+    random_read: float = 0.0
+    stream_byte: float = 0.0
 
 
 def half_turn(rpm: int) -> float:
@@ -48,18 +54,19 @@ def transfer(size: float, pool: Pool) -> float:
 def busy_cost(pool: Pool) -> BusyCost | None:
     """Return how many of the pool's drives its load keeps busy, None if unmodelled.
 
-    The skew is included: the factors speak for the busiest drive.  The share of the
-    pool is the product with the load over ``busy_drives``.
+    The skew is included: the factors speak for the busiest drive; so is what measured
+    times are of modelled ones.  The share of the pool is the product with the load over
+    ``busy_drives``.
     """
     if not pool.takes_volumes:
         return None
     if pool.requests_at_most:
         share = MILLI / pool.requests_at_most * max(pool.drives, 1)
-        return BusyCost(share, share, 0.0, 0.0)
+        return _scaled(BusyCost(share, share, 0.0, 0.0), pool.measured_factor / PPM)
     if not pool.drives and not pool.expansion:
         return None
     work = _flash(pool) if pool.media is Media.FLASH else _spinning(pool)
-    return BusyCost(*(part * pool.skew / PPM for part in work))
+    return _scaled(work, pool.skew / PPM * pool.measured_factor / PPM)
 
 
 def busy_drives(pool: Pool, steps: int = 0) -> int:
@@ -68,22 +75,34 @@ def busy_drives(pool: Pool, steps: int = 0) -> int:
     return max(count, 1) if pool.requests_at_most else count
 
 
-def _flash(pool: Pool) -> tuple[float, float, float, float]:
+def _scaled(cost: BusyCost, factor: float) -> BusyCost:
+    return BusyCost(*(part * factor for part in astuple(cost)))
+
+
+def _flash(pool: Pool) -> BusyCost:
     cost = protection.of_pool(pool)
     read, write = _per(pool.reads_at_most), _per(pool.writes_at_most)
     byte = transfer(1, pool)
-    return (
-        read,
-        float(cost.reads) * read + float(cost.writes) * write,
-        byte,
-        byte * float(cost.total),
+    return BusyCost(
+        read=read,
+        write=float(cost.reads) * read + float(cost.writes) * write,
+        read_byte=byte,
+        write_byte=byte * float(cost.total),
     )
 
 
-def _spinning(pool: Pool) -> tuple[float, float, float, float]:
+def _spinning(pool: Pool) -> BusyCost:
+    """Random reads and writes position each; a stream once per prefetch unit."""
     cost = float(protection.of_pool(pool).total)
     seek, byte = positioning(pool), transfer(1, pool)
-    return seek, seek * cost, byte, byte * cost
+    return BusyCost(
+        read=0.0,
+        write=seek * cost,
+        read_byte=byte,
+        write_byte=byte * cost,
+        random_read=seek,
+        stream_byte=seek / pool.prefetch_unit if pool.prefetch_unit else 0.0,
+    )
 
 
 def _per(rate: int) -> float:

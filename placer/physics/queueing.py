@@ -6,9 +6,11 @@ References
    Theory", 1981, p. 189.
 """
 
+from dataclasses import dataclass
+
 from placer.estate import Array, Load, Media, Pool
 from placer.physics import drives
-from placer.units import MILLI
+from placer.units import MILLI, PPM
 
 MOST_BUSY = 0.95
 
@@ -39,24 +41,41 @@ def knows_response(pool: Pool) -> bool:
     return pool.seek > 0 or pool.rpm > 0
 
 
-def read_time(pool: Pool, size: float, busy: float) -> float:
-    """Return the mean time of one read of ``size`` [B] at the drives [s]."""
-    moved = drives.transfer(size, pool)
+@dataclass(frozen=True, slots=True)
+class Reads:
+    """What a volume's reads are like: mean size [B], shares random and hit [1]."""
+
+    size: float
+    random: float = 1.0
+    hits: float = 0.0
+
+
+def read_time(pool: Pool, reads: Reads, busy: float) -> float:
+    """Return the mean time of one read at the drives [s]."""
+    moved = drives.transfer(reads.size, pool)
     if pool.media is Media.FLASH:
         held = moved + (MILLI / pool.reads_at_most if pool.reads_at_most else 0.0)
         return pool.read_time / drives.MICRO + moved + wait(busy, held)
-    whole = drives.positioning(pool) + moved
+    whole = drives.positioning(pool) * _positionings(pool, reads) + moved
     return whole + wait(busy, whole)
 
 
-def response(load: Load, pool: Pool, array: Array, busy: float) -> float:
+def response(load: Load, reads: Reads, pool: Pool, array: Array, busy: float) -> float:
     """Return the mean response of a load [us], 0 where it is not known or none.
 
-    Writes are answered from the array's protected cache; reads by the drives.
+    Writes are answered from the array's protected cache; reads by its cache where they
+    hit, else by the drives.
     """
     requests = load.reads + load.writes
     if not requests or not knows_response(pool):
         return 0.0
-    size = load.read_bytes * MILLI / load.reads if load.reads else 0.0
-    read = read_time(pool, size, busy) * drives.MICRO
+    factor = drives.MICRO * pool.measured_factor / PPM
+    missed = read_time(pool, reads, busy) * factor
+    read = reads.hits * array.read_hit_answer + (1 - reads.hits) * missed
     return (load.reads * read + load.writes * array.write_answer) / requests
+
+
+def _positionings(pool: Pool, reads: Reads) -> float:
+    """Return how often a mean read positions: streams once per prefetch unit."""
+    unit = pool.prefetch_unit
+    return reads.random + (1 - reads.random) * (reads.size / unit if unit else 0.0)

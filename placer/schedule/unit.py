@@ -72,7 +72,7 @@ def units(
             lanes.copy(*ends),
             levels.room(row, target),
             levels.room(row, source),
-            candidates.volumes[row].hold_days,
+            candidates.volumes[row].days_held,
         )
 
     def unit(group: list[Transfer]) -> Unit:
