@@ -191,7 +191,7 @@ def _written(write: Callable[[], Path]) -> Path:
 def _code(made: Plan, found: tuple[Finding, ...]) -> Exit:
     if found:
         return Exit.REFUSED
-    if made.status is Status.NO_PLAN or made.left:
+    if made.shortages or made.left:
         return Exit.NO_PLAN
     return Exit.DONE
 

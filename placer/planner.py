@@ -51,6 +51,7 @@ def plan(
         uses=_today(candidates)
         + _planned(candidates, found.places, found.bought, Moment.PLANNED),
         goals=found.goals,
+        shortages=schedule.overruns,
     )
 
 

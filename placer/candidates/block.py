@@ -39,6 +39,8 @@ class Block:
         (owners, steps + 1) what is allowed once k expansion steps are bought.
     home
         (volumes,) index of the pool where each volume is today.
+    hourly
+        Whether hours matter, so that the one that binds is worth naming.
     unit, scale
         Unit of the report, and how much of the limit's own unit one of it is.
     """
@@ -54,6 +56,7 @@ class Block:
     move_costs: Floats
     ease: Floats
     eased: Floats
+    hourly: bool = False
     unit: str = ""
     scale: float = 1.0
 

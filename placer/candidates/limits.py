@@ -122,7 +122,7 @@ def pool_busy(date: Date) -> Block:
     pools = [pool for pool in date.estate.pools if costs[pool.id]]
     return _block(
         date,
-        Kind("pool-busy", "drives", reads=READS),
+        Kind("pool-busy", "drives", hourly=True, reads=READS),
         date.drive_loads,
         _by_pool(date, pools, _busy_at_most),
         lambda pool: _factors(costs[pool.id]),
@@ -150,7 +150,7 @@ def controller_busy(date: Date) -> Block:
     arrays = [array for array in date.estate.arrays if costs[array.name]]
     return _block(
         date,
-        Kind("controller-busy", "%", PERCENT / PPM),
+        Kind("controller-busy", "%", PERCENT / PPM, hourly=True),
         date.loads,
         _by_array(date, arrays, lambda array: array.controller_ceiling / PPM),
         lambda pool: _controller_factors(costs[pool.array]),
@@ -189,6 +189,7 @@ class Kind:
     code: str
     unit: str
     scale: float = 1.0
+    hourly: bool = False
     reads: tuple[int, ...] = ()
 
 
@@ -241,6 +242,7 @@ def _block(
         costs=costs,
         ease=costs * spared,
         eased=date.hits,
+        hourly=kind.hourly,
         limits=np.array([owners.limits[name] for name in names]),
         home=date.home,
         moved=date.copied,

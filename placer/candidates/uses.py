@@ -73,7 +73,7 @@ def _use(
     if block.code == "pool-busy":
         percent = in_percent(candidates, block, owner)
         unit, scale = "%", (limit or 1.0) / percent
-    label = candidates.estate.hours[hour].label if block.hours > 1 else ""
+    label = candidates.estate.hours[hour].label if block.hourly else ""
     return Use(
         where=block.owners[owner],
         limit=block.code,

@@ -137,7 +137,7 @@ class Words:
         use = float(block.use(self._places)[at, hour])
         limit = self._limit(block, at)
         amount, unit = self._amount(block, at, hour, use, limit)
-        label = self._candidates.estate.hours[hour].label if block.hours > 1 else ""
+        label = self._candidates.estate.hours[hour].label if block.hourly else ""
         when = f" at {label}" if label else ""
         return Shortage(
             limit=code,

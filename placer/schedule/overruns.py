@@ -33,5 +33,5 @@ def _shortage(estate: Estate, level: Level, found: Overrun) -> Shortage:
         unit=block.unit,
         sentence=f"{what} from the date of the cure, {since}, until {until}.",
         remedy=_REMEDY,
-        hour=estate.hours[found.hour].label if block.hours > 1 else "",
+        hour=estate.hours[found.hour].label if block.hourly else "",
     )

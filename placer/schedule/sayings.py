@@ -20,7 +20,7 @@ def where(level: Level) -> str:
 
 def short(estate: Estate, level: Level, amount: float, hour: int) -> str:
     """Return by how much a limit is short, and in which hour where it has hours."""
-    when = f" at {estate.hours[hour].label}" if level.block.hours > 1 else ""
+    when = f" at {estate.hours[hour].label}" if level.block.hourly else ""
     figure = f"{amount / level.block.scale:,.4g} {_SHORT[level.block.code][1]}"
     return f"{where(level)}{when}: {figure}"
 
