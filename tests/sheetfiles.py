@@ -39,8 +39,22 @@ def least() -> dict[str, list[list[object]]]:
     return deepcopy(LEAST)
 
 
+_MORE: list[list[object]] = [
+    [
+        *("application", "host", "tenant", "role", "random reads (%)"),
+        *("read hits (%)", "snapshots (GiB)", "snapshot days"),
+    ],
+    ["tickets", "h1", "ferries", None, "50%", 20, 12.5, 7],
+    ["tickets", "h2", None, "log", None, None, None, None],
+    [None, "h2", None, "quorum", None, None, None, None],
+]
+
 FULL: dict[str, Lines] = {
     **LEAST,
+    "volumes": [
+        [*line, *more] for line, more in zip(LEAST["volumes"], _MORE, strict=True)
+    ],
+    "tenants": [["tenant", "requests cap (1/s)"], ["ferries", 1200]],
     "classes": [
         ["class", "response limit (ms)", "importance", "hold (days)"],
         ["gold", 5, "vital", 30],
@@ -50,7 +64,11 @@ FULL: dict[str, Lines] = {
         ["K", "harbour", 4],
         ["L", "inland", 2],
     ],
-    "hosts": [["host", "arrays reached"], ["h1", "K;L"]],
+    "hosts": [
+        ["host", "arrays reached", "cluster"],
+        ["h1", "K;L", "bridge"],
+        ["h2", None, "bridge"],
+    ],
     "routes": [["from", "to", "together (MB/s)"], ["harbour", "L", 90.5]],
     "policy": [
         ["setting", "value"],

@@ -3,6 +3,7 @@
 import re
 import unicodedata
 from dataclasses import dataclass
+from decimal import Decimal
 from enum import Enum, IntEnum
 
 from placer.units import Side
@@ -94,7 +95,7 @@ class Column:
     by_media: tuple[tuple[str, str], ...] = ()
     derived: bool = False
     required: bool = False
-    lowest: int = 0
+    lowest: int | Decimal = 0
     highest: int = 10**9
     side: Side = Side.NEUTRAL
     words: tuple[str, ...] = ()

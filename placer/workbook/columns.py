@@ -1,9 +1,10 @@
 """The one table of sheets and columns: reader, blank workbook, guides use it."""
 
 from placer.workbook.column import Sheet
-from placer.workbook.sheets.demand import CLASSES, LOAD, VOLUMES
+from placer.workbook.sheets.demand import CLASSES, LOAD, TENANTS
 from placer.workbook.sheets.machines import ARRAYS, HOSTS, ROUTES
 from placer.workbook.sheets.pools import POOLS
+from placer.workbook.sheets.volumes import VOLUMES
 from placer.workbook.sheets.wishes import (
     CONTROL,
     FREEZES,
@@ -23,6 +24,7 @@ SHEETS = (
     POLICY,
     WINDOWS,
     CLASSES,
+    TENANTS,
     LOAD,
     HOSTS,
     ROUTES,

@@ -1,13 +1,13 @@
 """Reads an inventory: a workbook or a folder of CSV files to an estate and findings."""
 
-from collections.abc import Iterable, Mapping
+from collections.abc import Iterable, Mapping, Sequence
 from dataclasses import dataclass
 from datetime import date, datetime
 from difflib import get_close_matches
 from pathlib import Path
 from zoneinfo import ZoneInfo
 
-from placer.estate import Array, Estate, Host, Hour, Policy, Pool, Route, Volume
+from placer.estate import Array, Estate, Host, Hour, Policy, Pool, Route, Rule, Volume
 from placer.findings import Finding, Place, errors
 from placer.workbook.column import key
 from placer.workbook.columns import GUIDE, SHEETS, sheet
@@ -15,6 +15,7 @@ from placer.workbook.reading.control import Total, read_controls, totals
 from placer.workbook.reading.digest import digest
 from placer.workbook.reading.hours import Clock, LoadReader
 from placer.workbook.reading.machines import (
+    assume_caches,
     places_of,
     read_arrays,
     read_hosts,
@@ -27,9 +28,11 @@ from placer.workbook.reading.policy import read_policy, read_settings, start_dat
 from placer.workbook.reading.pools import read_pools
 from placer.workbook.reading.raw import RawSheet
 from placer.workbook.reading.remarks import Remarks
+from placer.workbook.reading.roles import RoleReader, read_clusters, read_roles
 from placer.workbook.reading.rules import RuleReader
 from placer.workbook.reading.source import read_source
 from placer.workbook.reading.table import Row, read_table
+from placer.workbook.reading.tenants import read_tenants
 from placer.workbook.reading.volumes import (
     VolumeReader,
     check_applications,
@@ -130,7 +133,6 @@ def _estate(name: str, tables: Tables, remarks: Remarks, today: date | None) -> 
     policy = read_policy(settings, start)
     machines = _machines(tables, remarks)
     demand = _demand(tables, machines, policy, Clock(zone, start), remarks)
-    rules = RuleReader(demand.volumes, machines.pools, machines.arrays, remarks)
     nights = NightReader(
         zone, start, settings.date("finish by"), machines.array_names, remarks
     )
@@ -144,7 +146,8 @@ def _estate(name: str, tables: Tables, remarks: Remarks, today: date | None) -> 
         policy=policy,
         hosts=machines.hosts,
         routes=machines.routes,
-        rules=tuple(map(rules.read, tables["rules"])),
+        tenants=read_tenants(tables["tenants"], tables["volumes"], remarks),
+        rules=_rules(tables, machines, demand.volumes, remarks),
         windows=nights.read(tables["windows"], tables["freezes"]),
         controls=read_controls(
             tables["control"], machines.array_names, tables["volumes"]
@@ -211,4 +214,20 @@ def _demand(
     rows = tables["volumes"]
     say_unlisted_hosts(rows, machines.hosts, machines.host_names, remarks)
     check_applications(rows, Names("application", remarks))
+    assume_caches(machines.arrays, volumes, remarks)
     return _Demand(hours, volumes)
+
+
+def _rules(
+    tables: Tables, machines: _Machines, volumes: Sequence[Volume], remarks: Remarks
+) -> tuple[Rule, ...]:
+    """Return the rules the user wrote down, then those that follow from roles."""
+    rows = tables["volumes"]
+    roles = read_roles(volumes, rows)
+    written = RuleReader(volumes, machines.pools, machines.arrays, roles, remarks)
+    implied = RoleReader(volumes, roles, read_clusters(tables["hosts"], remarks))
+    pairs = zip(volumes, rows, strict=True)
+    return (
+        *map(written.read, tables["rules"]),
+        *(rule for volume, row in pairs for rule in implied.read(volume, row)),
+    )

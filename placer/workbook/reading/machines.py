@@ -2,7 +2,7 @@
 
 from collections.abc import Iterable, Sequence
 
-from placer.estate import Array, Host, Route
+from placer.estate import Array, Host, Route, Volume
 from placer.findings import Place
 from placer.units import supply
 from placer.workbook.columns import sheet
@@ -69,6 +69,9 @@ def _array(row: Row) -> Array:
         controller_ceiling=row.whole("controller ceiling"),
         uneven=row.whole("uneven"),
         write_answer=row.whole("write answer"),
+        read_hit_answer=row.whole("read hit answer"),
+        cache=row.whole("cache"),
+        busy_measured=row.whole("controller busy measured"),
         one_copy=_one_copy(row, min(copies_in, copies_out), at_once),
         copies_in=copies_in,
         copies_out=copies_out,
@@ -78,6 +81,19 @@ def _array(row: Row) -> Array:
         largest_volume=row.whole("largest volume"),
         place=row.place("array"),
     )
+
+
+def assume_caches(
+    arrays: Iterable[Array], volumes: Iterable[Volume], remarks: Remarks
+) -> None:
+    """Say which caches are unknown, where the reads of any volume hit one."""
+    if not any(volume.read_hits for volume in volumes):
+        return
+    cache = sheet("arrays").column("cache")
+    for array in arrays:
+        if not array.cache:
+            row = Place("arrays", array.name)
+            remarks.default(cache, cache.default, row)
 
 
 def _one_copy(row: Row, together: int, at_once: int) -> int:

@@ -35,11 +35,16 @@ def read_quantity(cell: Cell, column: Column, scale: int) -> Quantity:
             f"{column.name} is merged over several cells",
             "unmerge and say the number of each row",
         )
-    if cell.text.casefold() == NOT_LIMITED:
+    if cell.text.casefold() == NOT_LIMITED and _may_be_unlimited(column):
         return Quantity(Decimal(0), scale)
     quantity = Quantity(MEASURES[column.kind](cell, column), scale)
     _check_bounds(quantity, cell, column)
     return quantity
+
+
+def _may_be_unlimited(column: Column) -> bool:
+    """Return whether 0 can stand for "not limited": it is below no bound of its own."""
+    return column.lowest == 0 or column.default == NOT_LIMITED
 
 
 def _check_bounds(quantity: Quantity, cell: Cell, column: Column) -> None:

@@ -5,7 +5,9 @@ from collections.abc import Callable, Iterable, Sequence
 from placer.estate import Array, Level, Media, Pool, Rule, RuleKind, Volume
 from placer.workbook.reading.names import Names
 from placer.workbook.reading.remarks import Remarks
+from placer.workbook.reading.roles import Roles
 from placer.workbook.reading.table import Row
+from placer.workbook.role import Role
 
 _RELATIONS = (RuleKind.APART, RuleKind.TOGETHER)
 _Lookup = dict[str, list[str]]
@@ -48,9 +50,10 @@ class RuleReader:
         volumes: Sequence[Volume],
         pools: Sequence[Pool],
         arrays: Sequence[Array],
+        roles: Roles,
         remarks: Remarks,
     ) -> None:
-        self._what = Selector("what", _volume_kinds(volumes), remarks)
+        self._what = Selector("what", _volume_kinds(volumes, roles), remarks)
         self._where = Selector("where", _pool_kinds(pools, arrays), remarks)
         self._homeless = sorted(array.name for array in arrays if not array.site)
 
@@ -58,7 +61,7 @@ class RuleReader:
         """Return one rule."""
         kind = RuleKind(row.text("rule") or RuleKind.NEVER_ON)
         relation = kind in _RELATIONS
-        volumes = (self._what.pick(row) if row.given("what") else None) or ()
+        volumes = self._volumes(row)
         if relation and len(volumes) == 1:
             row.error(
                 "cell",
@@ -75,6 +78,17 @@ class RuleReader:
             why=row.text("why"),
             place=row.place("what"),
         )
+
+    def _volumes(self, row: Row) -> tuple[str, ...]:
+        picked = self._what.pick(row) if row.given("what") else None
+        if picked == ():
+            row.remarks.warn(
+                "unknown",
+                row.place("what"),
+                f'"{row.text("what")}" is no volume of the inventory',
+                "fill in the column role of the sheet volumes, or take the rule out",
+            )
+        return picked or ()
 
     def _pools(self, row: Row) -> tuple[str, ...]:
         if not row.given("rule"):
@@ -109,14 +123,20 @@ class RuleReader:
         return Level(said)
 
 
-def _volume_kinds(volumes: Iterable[Volume]) -> dict[str, _Lookup]:
-    kinds: dict[str, _Lookup] = {"volume": {}, "application": {}, "host": {}}
+def _volume_kinds(volumes: Iterable[Volume], roles: Roles) -> dict[str, _Lookup]:
+    ways: dict[str, Callable[[Volume], Iterable[str]]] = {
+        "volume": lambda volume: [volume.id],
+        "application": lambda volume: volume.applications,
+        "host": lambda volume: [volume.host],
+        "tenant": lambda volume: [volume.tenant],
+        "role": lambda volume: [roles[volume.id].value],
+    }
+    kinds: dict[str, _Lookup] = {kind: {} for kind in ways}
+    kinds["role"] = {role.value: [] for role in Role}
     for volume in volumes:
-        kinds["volume"][volume.id] = [volume.id]
-        for application in volume.applications:
-            kinds["application"].setdefault(application, []).append(volume.id)
-        if volume.host:
-            kinds["host"].setdefault(volume.host, []).append(volume.id)
+        for kind, names_of in ways.items():
+            for name in filter(None, names_of(volume)):
+                kinds[kind].setdefault(name, []).append(volume.id)
     return kinds
 
 

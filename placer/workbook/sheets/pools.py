@@ -1,14 +1,9 @@
-"""Sheet of the pools: room, drives, limits, expansion.
-
-Defaults of media are common practice, no source.
-"""
+"""Sheet of the pools: room, protection, limits, expansion."""
 
 from placer.estate import Media
 from placer.units import Side
 from placer.workbook.column import NOT_LIMITED, Column, Effect, Kind, Sheet
-
-FLASH = Media.FLASH.value
-SPINNING = Media.SPINNING.value
+from placer.workbook.sheets.drives import DRIVES
 
 _PROTECTION = (
     Column(
@@ -139,137 +134,6 @@ _PROTECTION = (
     ),
 )
 
-_DRIVES = (
-    Column(
-        name="read time idle",
-        kind=Kind.NUMBER,
-        unit="us",
-        by_media=((FLASH, "150"),),
-        side=Side.DEMAND,
-        highest=10**7,
-        effect=Effect.RESPONSE,
-        meaning="flash: time of a read on an idle drive",
-    ),
-    Column(
-        name="write time idle",
-        kind=Kind.NUMBER,
-        unit="us",
-        by_media=((FLASH, "50"),),
-        side=Side.DEMAND,
-        highest=10**7,
-        effect=Effect.RESPONSE,
-        meaning="flash: time of a write on an idle drive",
-    ),
-    Column(
-        name="reads at most",
-        kind=Kind.NUMBER,
-        unit="1/s per drive",
-        by_media=((FLASH, "80000"),),
-        side=Side.SUPPLY,
-        highest=10**7,
-        effect=Effect.BUSY,
-        meaning="flash: reads per second one drive serves, and nothing else",
-    ),
-    Column(
-        name="writes at most",
-        kind=Kind.NUMBER,
-        unit="1/s per drive",
-        by_media=((FLASH, "30000"),),
-        side=Side.SUPPLY,
-        highest=10**7,
-        effect=Effect.BUSY,
-        meaning="flash: writes per second one drive serves, and nothing else",
-    ),
-    Column(
-        name="MB/s per drive",
-        kind=Kind.NUMBER,
-        unit="MB/s",
-        by_media=((FLASH, "1000"), (SPINNING, "150")),
-        side=Side.SUPPLY,
-        highest=10**5,
-        effect=Effect.BUSY,
-        meaning="bytes per second one drive passes",
-    ),
-    Column(
-        name="drive writes per day",
-        kind=Kind.RATIO,
-        by_media=((FLASH, NOT_LIMITED),),
-        side=Side.SUPPLY,
-        highest=100,
-        effect=Effect.WEAR,
-        synonyms=("dwpd",),
-        meaning="flash: whole drive writes a day the rating allows",
-    ),
-    Column(
-        name="warranty",
-        kind=Kind.NUMBER,
-        unit="years",
-        by_media=((FLASH, "5"),),
-        side=Side.SUPPLY,
-        highest=20,
-        effect=Effect.WEAR,
-        meaning="flash: years for which the rating holds",
-    ),
-    Column(
-        name="wear used",
-        kind=Kind.PERCENT,
-        unit="%",
-        by_media=((FLASH, "0"),),
-        side=Side.DEMAND,
-        highest=100,
-        effect=Effect.WEAR,
-        meaning="flash: share of the rated writes already used",
-    ),
-    Column(
-        name="life asked",
-        kind=Kind.NUMBER,
-        unit="years",
-        by_media=((FLASH, "5"),),
-        side=Side.DEMAND,
-        highest=20,
-        effect=Effect.WEAR,
-        meaning="flash: years the drives shall still last",
-    ),
-    Column(
-        name="array overhead",
-        kind=Kind.RATIO,
-        by_media=((FLASH, "1.1"),),
-        side=Side.DEMAND,
-        lowest=1,
-        highest=10,
-        effect=Effect.WEAR,
-        meaning="flash: bytes the array writes per byte of data and parity",
-    ),
-    Column(
-        name="rpm",
-        kind=Kind.COUNT,
-        by_media=((SPINNING, "7200"),),
-        highest=100_000,
-        effect=Effect.RESPONSE,
-        synonyms=("turns per minute",),
-        meaning="spinning: turns per minute",
-    ),
-    Column(
-        name="seek",
-        kind=Kind.NUMBER,
-        unit="ms",
-        by_media=((SPINNING, "8.5"),),
-        side=Side.DEMAND,
-        highest=1000,
-        effect=Effect.RESPONSE,
-        synonyms=("seek time", "mean seek"),
-        meaning="spinning: mean seek",
-    ),
-    Column(
-        name="requests at most",
-        kind=Kind.NUMBER,
-        unit="1/s",
-        side=Side.SUPPLY,
-        highest=10**8,
-        meaning="black box: requests per second of the whole pool, drives unknown",
-    ),
-)
-
 _EXPANSION = (
     Column(
         name="drives per step",
@@ -339,7 +203,7 @@ POOLS = Sheet(
             meaning="flash, spinning; mixed and unmodelled only give volumes away",
         ),
         *_PROTECTION,
-        *_DRIVES,
+        *DRIVES,
         *_EXPANSION,
     ),
 )

@@ -12,7 +12,8 @@ RULES = Sheet(
             name="what",
             kind=Kind.TEXT,
             required=True,
-            meaning="volume A1/V1; A1/V2 - or application NAME - or host NAME",
+            meaning="volume A1/V1; A1/V2 - or application, host, tenant NAME - or role "
+            "log",
         ),
         Column(
             name="rule",

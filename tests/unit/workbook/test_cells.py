@@ -176,3 +176,17 @@ def test_a_number_in_a_cell_and_as_text_are_the_same(amount: Decimal) -> None:
 
 def test_not_limited_may_be_written_out() -> None:
     assert exact("arrays/reads at most", "not limited") == 0
+
+
+@pytest.mark.parametrize(
+    "name",
+    [
+        "pools/data per stripe",
+        "pools/skew",
+        "pools/prefetch unit",
+        "arrays/controllers",
+    ],
+)
+def test_not_limited_is_no_number_where_nothing_less_than_one_can_be(name: str) -> None:
+    """Read as 0 it would divide by nothing, or take a load away."""
+    assert fault(name, "not limited").code == "cell"

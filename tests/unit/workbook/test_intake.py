@@ -51,6 +51,11 @@ def test_the_full_inventory_fills_every_record(tmp_path: Path) -> None:
     assert found.routes[0].together == 90_500_000
     assert found.policy.least_gain == 250_000
     assert found.rules[0].volumes == ("K/db01", "K/db02")
+    assert [r.volumes for r in found.rules[1:]] == [
+        ("K/db02", "K/db01"),
+        ("L/web01", "K/db01"),
+    ]
+    assert found.tenants[0].requests_cap == 1_200_000
     assert found.controls[0].volumes == 3
     assert found.volumes[0].profiled
     assert {w.end - w.start for w in found.windows} == {390}
@@ -75,6 +80,30 @@ def test_the_digest_changes_with_any_value(tmp_path: Path, cell: str) -> None:
     other = Changed(tmp_path / "estate.xlsx", least())
     old = other["volumes"][cell].value
     other["volumes"][cell].value = f"{old}x" if isinstance(old, str) else old * 1.0001
+    again = other.read().estate
+    assert again is not None
+    assert again.digest != plain
+
+
+@pytest.mark.parametrize(
+    ("sheet", "cell", "value"),
+    [
+        ("volumes", "K2", "harbour office"),
+        ("volumes", "L2", "boot"),
+        ("volumes", "M2", 33),
+        ("volumes", "N2", 33),
+        ("volumes", "O2", 33),
+        ("volumes", "P2", 33),
+        ("tenants", "B2", 1201),
+        ("hosts", "C3", "engine"),
+    ],
+)
+def test_the_digest_covers_tenants_roles_hits_and_snapshots(
+    tmp_path: Path, sheet: str, cell: str, value: object
+) -> None:
+    plain = estate(tmp_path, FULL).digest
+    other = Changed(tmp_path / "estate.xlsx", FULL)
+    other[sheet][cell].value = value
     again = other.read().estate
     assert again is not None
     assert again.digest != plain

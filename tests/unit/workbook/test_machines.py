@@ -5,7 +5,7 @@ from pathlib import Path
 import pytest
 from sheetfiles import estate, intake, least, only_error
 
-from placer.units import MB
+from placer.units import GIB, MB
 
 Sheets = dict[str, list[list[object]]]
 
@@ -79,3 +79,25 @@ def test_a_host_that_is_not_listed_is_said_where_others_are(tmp_path: Path) -> N
     assert intake(tmp_path, sheets).findings == ()
     sheets["volumes"][1][-1] = "H2"
     assert only_error(intake(tmp_path, sheets)).code == "id"
+
+
+def test_what_an_array_answers_from_its_cache(tmp_path: Path) -> None:
+    sheets = with_sheet(
+        "arrays",
+        [
+            "array",
+            "read hit answer (us)",
+            "cache (GiB)",
+            "controller busy measured (%)",
+        ],
+        ["K", 150, 256, 44],
+    )
+    typed, blank = estate(tmp_path, sheets).arrays
+    assert (typed.read_hit_answer, typed.cache) == (150, 256 * GIB)
+    assert typed.busy_measured == 440_000
+    assert (blank.read_hit_answer, blank.cache, blank.busy_measured) == (200, 0, 0)
+
+
+def test_a_cache_in_gb_is_asked(tmp_path: Path) -> None:
+    sheets = with_sheet("arrays", ["array", "cache (GB)"], ["K", 256])
+    assert only_error(intake(tmp_path, sheets)).code == "unit"

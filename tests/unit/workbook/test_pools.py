@@ -6,7 +6,7 @@ import pytest
 from sheetfiles import estate, intake, least, only_error
 
 from placer.estate import Assumption, Expansion, Pool
-from placer.units import GIB
+from placer.units import GIB, MIB
 
 Sheets = dict[str, list[list[object]]]
 
@@ -144,3 +144,51 @@ def test_two_pools_of_one_name_on_one_array_are_refused(tmp_path: Path) -> None:
     sheets = least()
     sheets["pools"].append(["S1", "K", "flash", 8, 3840])
     assert only_error(intake(tmp_path, sheets)).code == "duplicate"
+
+
+def test_spinning_prefetches_a_mebibyte_and_flash_does_not_say(tmp_path: Path) -> None:
+    found = estate(tmp_path, least())
+    assert [p.prefetch_unit for p in found.pools] == [MIB, MIB]
+    assumed = [a for a in found.assumptions if a.column == "prefetch unit"]
+    assert [(a.value, a.cells) for a in assumed] == [("1024 KiB", 1)]
+
+
+def test_what_was_measured_is_read_as_typed(tmp_path: Path) -> None:
+    cells: dict[str, object] = {
+        "usable (GiB)": 500,
+        "prefetch unit (KiB)": 512,
+        "pool busy measured (%)": "62.5%",
+        "measured factor": 1.25,
+    }
+    found = pool(tmp_path, "spinning", **cells)
+    assert found.prefetch_unit == MIB // 2
+    assert (found.busy_measured, found.measured_factor) == (625_000, 1_250_000)
+
+
+def test_a_pool_not_measured_has_the_factor_one(tmp_path: Path) -> None:
+    found = estate(tmp_path, least()).pools[0]
+    assert (found.busy_measured, found.measured_factor) == (0, 1_000_000)
+
+
+@pytest.mark.parametrize(
+    ("column", "typed"),
+    [
+        ("prefetch unit (KiB)", 0),
+        ("measured factor", 0),
+        ("measured factor", 0.09),
+        ("measured factor", 11),
+        ("pool busy measured (%)", 101),
+    ],
+)
+def test_what_would_divide_by_nothing_or_undo_a_load_is_refused(
+    tmp_path: Path, column: str, typed: object
+) -> None:
+    sheets = with_pool(**{"usable (GiB)": 500, column: typed})
+    sheets["pools"][3][2] = "spinning"
+    error = only_error(intake(tmp_path, sheets))
+    assert (error.code, error.place.cell) == ("bounds", "G4")
+
+
+def test_a_factor_under_one_is_as_good_as_one_over_it(tmp_path: Path) -> None:
+    cells: dict[str, object] = {"usable (GiB)": 500, "measured factor": 0.7}
+    assert pool(tmp_path, "flash", **cells).measured_factor == 700_000

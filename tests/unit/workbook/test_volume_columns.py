@@ -1,0 +1,104 @@
+"""Volumes: tenant, sequential reads, read hits, snapshots; blank is the safe case."""
+
+from pathlib import Path
+
+import pytest
+from sheetfiles import estate, intake, least, only_error
+
+from placer.estate import Volume
+from placer.units import GIB
+
+Sheets = dict[str, list[list[object]]]
+EFFECT = "decides how much load a pool or an array carries"
+
+
+def with_columns(**cells: object) -> Sheets:
+    """Return the least inventory; the first volume has the cells, the others none."""
+    sheets = least()
+    sheets["volumes"][0] += list(cells)
+    sheets["volumes"][1] += list(cells.values())
+    return sheets
+
+
+def volume(tmp_path: Path, **cells: object) -> Volume:
+    return estate(tmp_path, with_columns(**cells)).volumes[0]
+
+
+def test_what_is_typed_is_read(tmp_path: Path) -> None:
+    found = volume(
+        tmp_path,
+        **{
+            "tenant": "ferries",
+            "random reads (%)": "12.5%",
+            "read hits (%)": 40,
+            "snapshots (GiB)": 12.5,
+            "snapshot days": 30,
+        },
+    )
+    assert (found.random_reads, found.read_hits) == (125_000, 400_000)
+    assert (found.snapshots, found.snapshot_days) == (25 * GIB // 2, 30)
+    assert found.tenant == "ferries"
+
+
+def test_a_blank_cell_is_random_missed_and_without_snapshots(tmp_path: Path) -> None:
+    blank = estate(tmp_path, with_columns(**{"read hits (%)": 40})).volumes[1]
+    assert (blank.random_reads, blank.read_hits) == (1_000_000, 0)
+    assert (blank.snapshots, blank.snapshot_days, blank.tenant) == (0, 0, "")
+
+
+def test_blank_shares_are_assumptions_that_count_the_cells(tmp_path: Path) -> None:
+    sheets = with_columns(**{"random reads (%)": 20, "read hits (%)": 40})
+    assumed = {a.column: a for a in estate(tmp_path, sheets).assumptions}
+    for column, value in (("random reads", "100 %"), ("read hits", "0 %")):
+        found = assumed[column]
+        assert (found.value, found.cells, found.effect) == (value, 2, EFFECT)
+    assert (assumed["snapshots"].value, assumed["snapshots"].cells) == ("0 GiB", 3)
+
+
+def test_shares_are_rounded_to_the_safe_side(tmp_path: Path) -> None:
+    """Random reads cost more (up), hits save (down)."""
+    found = volume(
+        tmp_path, **{"random reads (%)": "33.33333%", "read hits (%)": "33.33333%"}
+    )
+    assert (found.random_reads, found.read_hits) == (333_334, 333_333)
+
+
+@pytest.mark.parametrize("column", ["random reads (%)", "read hits (%)"])
+@pytest.mark.parametrize(("typed", "code"), [(101, "bounds"), (0.5, "percent")])
+def test_a_share_above_all_or_without_its_sign_is_asked(
+    tmp_path: Path, column: str, typed: object, code: str
+) -> None:
+    error = only_error(intake(tmp_path, with_columns(**{column: typed})))
+    assert (error.code, error.place.cell) == (code, "I2")
+
+
+@pytest.mark.parametrize("typed", [-1, 2.5, "a week"])
+def test_snapshot_days_are_whole_and_not_negative(
+    tmp_path: Path, typed: object
+) -> None:
+    error = only_error(intake(tmp_path, with_columns(**{"snapshot days": typed})))
+    assert error.place.cell == "I2"
+
+
+def test_snapshots_in_gb_are_asked_as_every_size_is(tmp_path: Path) -> None:
+    sheets = with_columns(**{"snapshots (GB)": 10})
+    assert only_error(intake(tmp_path, sheets)).code == "unit"
+
+
+def test_a_role_that_is_none_is_refused_with_the_words_there_are(
+    tmp_path: Path,
+) -> None:
+    error = only_error(intake(tmp_path, with_columns(role="journal")))
+    assert (error.code, error.place.cell) == ("cell", "I2")
+    assert "quorum" in error.remedy
+
+
+def test_unknown_caches_are_said_where_any_read_hits_one(tmp_path: Path) -> None:
+    def unknown(**cells: object) -> list[int]:
+        sheets = with_columns(**cells)
+        sheets["arrays"] = [["array", "cache (GiB)"], ["L", 64]]
+        assumed = estate(tmp_path, sheets).assumptions
+        return [a.cells for a in assumed if a.column == "cache"]
+
+    assert unknown(**{"read hits (%)": 40}) == [1]
+    assert unknown(**{"read hits (%)": 0}) == []
