@@ -3,6 +3,7 @@
 from collections.abc import Iterable, Mapping
 from functools import cached_property
 
+from placer.audit.caches import Caches
 from placer.audit.demand import Demand, demand_at, months_of_nights
 from placer.estate import Array, Estate, Route, Volume, Window
 from placer.plan import Booking, Move, Placed, Plan
@@ -37,6 +38,11 @@ class Case:
     def horizon(self) -> Demand:
         """Demand at the growth horizon."""
         return demand_at(self.estate, self.estate.policy.horizon_months)
+
+    @cached_property
+    def caches(self) -> Caches:
+        """The caches of the arrays."""
+        return Caches(self.estate)
 
     @cached_property
     def placed(self) -> dict[str, Placed]:

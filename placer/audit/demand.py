@@ -1,14 +1,16 @@
-"""What volumes ask for at a date: sizes and loads with their growth.
+"""What volumes ask for at a date: sizes and loads with their growth and caps.
 
 Loads are carried as whole numbers, ``GRAIN`` of them to a thousandth of a request per
 second or to a byte per second, rounded up, so that sums over volumes stay exact.
 """
 
+from collections.abc import Sequence
 from dataclasses import dataclass
 from decimal import Decimal, localcontext
 from fractions import Fraction
 from math import ceil
 
+from placer.audit.tenants import factors
 from placer.estate import Estate, Load, Volume
 from placer.units import MINUTES_PER_DAY, MONTHS_PER_YEAR, PPM
 
@@ -27,11 +29,13 @@ class Demand:
 
 def demand_at(estate: Estate, months: int) -> Demand:
     """Return what every volume asks for some months after today."""
-    return Demand(
-        months,
-        {volume.id: size(volume, months) for volume in estate.volumes},
-        {volume.id: loads(volume, months) for volume in estate.volumes},
-    )
+    loads = {volume.id: grown(volume, months) for volume in estate.volumes}
+    by_tenant = factors(estate, loads, GRAIN)
+    for volume in estate.volumes:
+        if volume.tenant in by_tenant:
+            loads[volume.id] = capped(loads[volume.id], by_tenant[volume.tenant])
+    sizes = {volume.id: size(volume, months) for volume in estate.volumes}
+    return Demand(months, sizes, loads)
 
 
 def months_of_nights(estate: Estate) -> int:
@@ -60,11 +64,23 @@ def size(volume: Volume, months: int) -> int:
     return min(volume.provisioned, grown)
 
 
-def loads(volume: Volume, months: int) -> tuple[int, ...]:
-    """Return reads, writes, bytes read, bytes written of each hour in turn [GRAIN]."""
+def grown(volume: Volume, months: int) -> tuple[int, ...]:
+    """Return reads, writes, bytes read, bytes written of each hour in turn [GRAIN].
+
+    Nothing is capped yet.
+    """
     factor = growth(volume.load_growth, months) * GRAIN
     top, bottom = factor.numerator, factor.denominator
     return tuple(-(-part * top // bottom) for load in volume.load for part in _of(load))
+
+
+def capped(load: Sequence[int], factor: Sequence[Fraction]) -> tuple[int, ...]:
+    """Return a load (4 parts of each hour in turn) times a factor of each hour."""
+    terms = [each.as_integer_ratio() for each in factor for _ in range(4)]
+    return tuple(
+        -(-part * top // bottom)
+        for part, (top, bottom) in zip(load, terms, strict=True)
+    )
 
 
 def _of(load: Load) -> tuple[int, int, int, int]:
@@ -72,17 +88,17 @@ def _of(load: Load) -> tuple[int, int, int, int]:
 
 
 def busiest(volume: Volume) -> int:
-    """Return the index of the first hour with the most requests."""
+    """Return the index of the first hour with the most requests, as measured."""
     asked = [load.reads + load.writes for load in volume.load]
     return asked.index(max(asked))
 
 
 def busiest_load(volume: Volume) -> Load:
-    """Return the load of the first hour with the most requests."""
+    """Return the load of the busiest hour, as measured."""
     return volume.load[busiest(volume)]
 
 
 def busiest_requests(volume: Volume) -> int:
-    """Return reads and writes of the busiest hour [1/1000 s]."""
+    """Return reads and writes of the busiest hour, as measured [1/1000 s]."""
     load = busiest_load(volume)
     return load.reads + load.writes

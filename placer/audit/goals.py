@@ -5,7 +5,7 @@ from fractions import Fraction
 from math import ceil
 
 from placer.audit.case import Case
-from placer.audit.demand import busiest_requests
+from placer.audit.demand import GRAIN, busiest
 from placer.audit.placement import spent
 from placer.audit.response import Answers
 from placer.estate import Aim, Estate, Volume
@@ -65,8 +65,14 @@ def gain(case: Case, answers: Answers, volume: Volume, pool: str) -> int:
 
 def weighted(case: Case, answers: Answers, volume: Volume, pool: str) -> Fraction:
     """Return what a volume adds to relief [ms/s]."""
-    saved = gain(case, answers, volume, pool) * busiest_requests(volume)
-    return Fraction(volume.importance.weight * saved, MILLI * MS)
+    saved = gain(case, answers, volume, pool) * _asked(case, volume)
+    return Fraction(volume.importance.weight * saved, GRAIN * MILLI * MS)
+
+
+def _asked(case: Case, volume: Volume) -> int:
+    """Return what a volume asks for today in its busiest hour [1/1000 s, GRAIN]."""
+    first = 4 * busiest(volume)
+    return sum(case.today.loads[volume.id][first : first + 2])
 
 
 def effort(case: Case) -> Fraction:

@@ -80,12 +80,12 @@ class Scene:
 
 
 def room(scene: Scene, pool: Pool) -> Gauge:
-    """Room: what lands after reduction."""
+    """Room: what lands after reduction, with the snapshots beside it."""
     return Gauge(
         "pool-room",
         pool.id,
         "GiB",
-        lambda volume: (scene.demand.sizes[volume.id],),
+        lambda volume: (scene.demand.sizes[volume.id] + volume.snapshots,),
         Fraction(PPM, pool.reduction * GIB),
         machines.room(pool, scene.bought(pool)) / GIB,
     )
@@ -107,17 +107,23 @@ def thin(scene: Scene, pool: Pool) -> Gauge | None:
 
 
 def busy(scene: Scene, pool: Pool) -> Gauge | None:
-    """Busy share of the drives of a pool, hour by hour."""
-    form = machines.busy_form(pool)
+    """Busy share of the drives of a pool, hour by hour, by the reads no cache has."""
+    caches = scene.case.caches
+    work = machines.busy_work(pool, caches.whole)
     over = machines.servers(pool, scene.bought(pool))
-    if form is None or not over:
+    if work is None or not over:
         return None
+
+    def adds(volume: Volume) -> list[int]:
+        form = work.form(volume.random_reads, caches.misses(volume, pool.array))
+        return form.of(scene.demand.loads[volume.id])
+
     return Gauge(
         "pool-busy",
         pool.id,
         "%",
-        lambda volume: form.of(scene.demand.loads[volume.id]),
-        Fraction(100, form.unit * GRAIN) / over,
+        adds,
+        Fraction(100, work.unit * GRAIN) / over,
         Fraction(pool.busy_ceiling, PERCENT),
         hourly=True,
     )

@@ -1,5 +1,6 @@
 """What pools and controllers can carry, by the formulas of DEVELOPERS.md."""
 
+from collections.abc import Sequence
 from dataclasses import dataclass
 from fractions import Fraction
 from math import lcm
@@ -34,10 +35,37 @@ class Form:
         ]
 
 
-def _form(*parts: Fraction) -> Form:
+@dataclass(frozen=True, slots=True)
+class Work:
+    """What loads add to the busy share of one drive, by the kind of their reads.
+
+    Attributes
+    ----------
+    random, sequential
+        What a read and a byte read add, in parts of unit / PPM / the parts of misses.
+    writes
+        What a write and a byte written add, in parts of the unit.
+    """
+
+    random: tuple[int, int]
+    sequential: tuple[int, int]
+    writes: tuple[int, int]
+    unit: int
+
+    def form(self, random: int, misses: int) -> Form:
+        """Return the form for one volume: random reads [ppm], misses [parts]."""
+        reads, read_bytes = (
+            (one * random + other * (PPM - random)) * misses
+            for one, other in zip(self.random, self.sequential, strict=True)
+        )
+        write, written = self.writes
+        return Form(reads, write, read_bytes, written, self.unit)
+
+
+def _whole(parts: Sequence[Fraction]) -> tuple[list[int], int]:
+    """Return fractions as whole parts of one unit, and that unit."""
     unit = lcm(*(part.denominator for part in parts))
-    reads, writes, read_bytes, write_bytes = (int(part * unit) for part in parts)
-    return Form(reads, writes, read_bytes, write_bytes, unit)
+    return [int(part * unit) for part in parts], unit
 
 
 def per(amount: Fraction | int, rating: int) -> Fraction:
@@ -95,49 +123,82 @@ def servers(pool: Pool, steps: int) -> Fraction:
     return Fraction(drives(pool, steps), pool.drives) if pool.drives else Fraction(1)
 
 
-def busy_form(pool: Pool) -> Form | None:
-    """Return what loads add to the busy share of one drive, or None: not modelled."""
+def busy_work(pool: Pool, whole: int) -> Work | None:
+    """Return what loads add to the busy share of one drive, or None: not modelled.
+
+    Parameters
+    ----------
+    pool
+        The pool whose drives work.
+    whole
+        In how many parts the misses of a volume will be counted.
+    """
     if not pool.takes_volumes:
         return None
+    measured = Fraction(pool.measured_factor, PPM)
+    parts, unit = _whole([part * measured for part in _parts(pool)])
+    random, sequential, write, random_byte, sequential_byte, written = parts
+    fine = PPM * whole
+    return Work(
+        (random, random_byte),
+        (sequential, sequential_byte),
+        (write * fine, written * fine),
+        unit * fine,
+    )
+
+
+def _parts(pool: Pool) -> list[Fraction]:
+    """Return the share of a random and a sequential read, a write, a byte of each."""
     if pool.requests_at_most:
         share = Fraction(1, pool.requests_at_most)
-        return _form(share, share, Fraction(0), Fraction(0))
+        return [share, share, share, Fraction(0), Fraction(0), Fraction(0)]
     parts = _flash(pool) if pool.media is Media.FLASH else _spinning(pool)
-    skew = Fraction(pool.skew, PPM)
-    return _form(*(part * skew for part in parts))
+    return [part * pool.skew / PPM for part in parts]
 
 
 def _flash(pool: Pool) -> tuple[Fraction, ...]:
     reads, writes = back_end(pool)
-    return (
-        per(1, pool.reads_at_most),
-        per(reads, pool.reads_at_most) + per(writes, pool.writes_at_most),
-        per(1, pool.drive_rate),
-        per(reads + writes, pool.drive_rate),
-    )
+    read, byte = per(1, pool.reads_at_most), per(1, pool.drive_rate)
+    write = per(reads, pool.reads_at_most) + per(writes, pool.writes_at_most)
+    return read, read, write, byte, byte, byte * (reads + writes)
 
 
 def _spinning(pool: Pool) -> tuple[Fraction, ...]:
     touched = sum(back_end(pool), start=Fraction(0))
-    positioned = (pool.seek + half_turn(pool)) / (PPM * MILLI)
+    positioned = positioning(pool) / (PPM * MILLI)
+    byte = per(1, pool.drive_rate)
     return (
         positioned,
+        Fraction(0),
         positioned * touched,
-        per(1, pool.drive_rate),
-        per(touched, pool.drive_rate),
+        byte,
+        byte + positions(pool) * positioning(pool) / PPM,
+        byte * touched,
     )
+
+
+def positioning(pool: Pool) -> Fraction:
+    """Return the time of positioning once [µs]: the seek and half a turn."""
+    return pool.seek + half_turn(pool)
+
+
+def positions(pool: Pool) -> Fraction:
+    """Return how often sequential reads position for one byte; a unit of 0: never."""
+    return per(1, pool.prefetch_unit)
 
 
 def controller_form(array: Array) -> Form:
     """Return what loads add to the busy share of the controllers that must do."""
     left = max(1, array.controllers - array.failures_survived)
-    parts = (
-        per(1, array.reads_at_most),
-        per(1, array.writes_at_most),
-        per(1, array.controller_rate),
-        per(1, array.controller_rate),
+    ratings = (
+        array.reads_at_most,
+        array.writes_at_most,
+        array.controller_rate,
+        array.controller_rate,
     )
-    return _form(*(part * array.uneven / (PPM * left) for part in parts))
+    shares = [per(1, rating) * array.uneven / (PPM * left) for rating in ratings]
+    (reads, writes, read, written), unit = _whole(shares)
+    return Form(reads, writes, read, written, unit)
 
 
 def wears(pool: Pool, steps: int) -> bool:

@@ -139,9 +139,10 @@ def window_cutovers(case: Case) -> Iterator[str]:
 
 
 def hold(case: Case) -> Iterator[str]:
-    """Check that a source is kept for its hold, from where the window opens."""
+    """Check that a source is kept for its hold, or as long as its snapshots."""
     for move in case.moves.values():
-        days = case.volumes[move.volume].hold_days
+        volume = case.volumes[move.volume]
+        days = max(volume.hold_days, volume.snapshot_days)
         for window in case.windows.get(move.window, [])[:1]:
             due = max(move.cutover, days_later(window.opens, days, window.zone))
             if move.released != due:

@@ -8,23 +8,45 @@ from math import ceil
 from placer.audit import limits, machines
 from placer.audit.case import Case
 from placer.audit.demand import busiest, busiest_load
-from placer.estate import Load, Media, Pool, Volume
+from placer.estate import Array, Media, Pool, Volume
 from placer.units import MILLI, PPM
 
 MOST_BUSY = Fraction(95, 100)
 """No wait is computed above this share: the formula has a pole at 1."""
 
 
-def response(load: Load, pool: Pool, write_answer: int, share: Fraction) -> int:
-    """Return the mean response of a load on a pool whose drives are busy by a share.
+def response(
+    volume: Volume, pool: Pool, array: Array, hits: Fraction, share: Fraction
+) -> int:
+    """Return the mean response of a volume on a pool whose drives are busy by a share.
 
-    Source: Pollaczek-Khinchine with fixed service times; half a turn is 30 / rpm s.
+    The load counts as measured: the factor of a tenant is that of all its parts, so
+    neither the size of a read nor the mix of reads and writes depends on it.
+
+    Parameters
+    ----------
+    volume
+        The volume, asked what it is asked in its busiest hour.
+    pool, array
+        Where it is served.
+    hits
+        [1] share of its reads that the cache there answers.
+    share
+        [1] busy share of the drives.
+
+    References
+    ----------
+    Pollaczek-Khinchine with fixed service times; half a turn is 30 / rpm s.
     """
+    load = busiest_load(volume)
     asked = load.reads + load.writes
     if unmodelled(pool) or not asked:
         return 0
-    read = _read(load, pool, min(share, MOST_BUSY)) if load.reads else Fraction(0)
-    return ceil((load.reads * read + load.writes * write_answer) / asked)
+    read = Fraction(0)
+    if load.reads:
+        at_drives = _at_drives(volume, pool, min(share, MOST_BUSY))
+        read = hits * array.read_hit_answer + (1 - hits) * at_drives
+    return ceil((load.reads * read + load.writes * array.write_answer) / asked)
 
 
 def unmodelled(pool: Pool) -> bool:
@@ -36,15 +58,25 @@ def unmodelled(pool: Pool) -> bool:
     return not pool.seek and not pool.rpm
 
 
-def _read(load: Load, pool: Pool, share: Fraction) -> Fraction:
+def _at_drives(volume: Volume, pool: Pool, share: Fraction) -> Fraction:
+    load = busiest_load(volume)
     size = Fraction(load.read_bytes * MILLI, load.reads)
     transfer = size * machines.per(PPM, pool.drive_rate)
     if pool.media is Media.FLASH:
         idle = pool.read_time + transfer
         holds = machines.per(PPM * MILLI, pool.reads_at_most) + transfer
     else:
-        idle = holds = pool.seek + machines.half_turn(pool) + transfer
-    return idle + share * holds / (2 * (1 - share))
+        idle = holds = (
+            _times(volume, pool, size) * machines.positioning(pool) + transfer
+        )
+    waited = share * holds / (2 * (1 - share))
+    return (idle + waited) * pool.measured_factor / PPM
+
+
+def _times(volume: Volume, pool: Pool, size: Fraction) -> Fraction:
+    """Return how often one read of a size [B] positions, in the mean."""
+    random = Fraction(volume.random_reads, PPM)
+    return random + (1 - random) * size * machines.positions(pool)
 
 
 class Answers:
@@ -69,8 +101,9 @@ class Answers:
         return {row.where: tuple(part / 100 for part in row.shares) for row in rows}
 
     def _at(self, volume: Volume, pool: Pool, share: Fraction) -> int:
-        answer = self.case.arrays[pool.array].write_answer
-        return response(busiest_load(volume), pool, answer, share)
+        array = self.case.arrays[pool.array]
+        hits = self.case.caches.hits(volume, array.name)
+        return response(volume, pool, array, hits, share)
 
     def _in(
         self, volume: Volume, pool: str, busy: Mapping[str, tuple[Fraction, ...]]

@@ -23,7 +23,7 @@ from placer.units import GIB, MB
 
 USES = "claim-uses"
 BACKUP = Move(
-    id="m6",
+    id="m7",
     volume="inland/backup",
     source="inland/box",
     target="inland/box",
@@ -67,8 +67,8 @@ DAMAGES = (
         "move-list",
         "left over for another target",
         plan(
-            moves=PLAN.moves[:-1],
-            bookings=PLAN.bookings[:-1],
+            moves=tuple(m for m in PLAN.moves if m.id != "m5"),
+            bookings=tuple(b for b in PLAN.bookings if b.move != "m5"),
             left=(replace(RELICS_LEFT, target="old/spin"),),
         ),
     ),

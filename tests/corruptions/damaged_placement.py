@@ -154,7 +154,11 @@ DAMAGES = (
         "the array's own route is closed, which counts before that of the halls",
         route("old", "new", possible=False),
     ),
-    damage("route", "none to the inland hall", estate(routes=ESTATE.routes[:2])),
+    damage(
+        "route",
+        "none to the inland hall",
+        estate(routes=(*ESTATE.routes[:2], ESTATE.routes[3])),
+    ),
     damage("only-on", "charts only on flash", rule(0, pools=("new/flash",))),
     damage("only-on", "mail too", rule(0, volumes=("old/charts", "old/mail"))),
     damage("never-on", "tickets never on flash", rule(1, pools=("new/flash",))),

@@ -1,7 +1,7 @@
 """A ferry company's estate, small enough to be worked by hand.
 
-Three arrays: `old` and `new` in the harbour hall, `inland` in the inland hall.  All
-figures are chosen so that the arithmetic in ``sailing`` can be followed on paper.
+Five arrays: `inland` in the inland hall, the others in the harbour hall.  All figures
+are chosen so that the arithmetic in ``sailing`` can be followed on paper.
 """
 
 from datetime import datetime
@@ -22,6 +22,7 @@ from placer.estate import (
     Route,
     Rule,
     RuleKind,
+    Tenant,
     Window,
 )
 from placer.units import GIB, MB, MILLI
@@ -102,6 +103,32 @@ POOLS = (
         usable=2_000 * GIB,
         requests_at_most=1_000 * MILLI,
     ),
+    Pool(
+        array="mole",
+        name="disks",
+        media=Media.SPINNING,
+        drives=10,
+        usable=1_000 * GIB,
+        skew=1_000_000,
+        drive_rate=100 * MB,
+        rpm=7_500,
+        seek=6_000,
+        prefetch_unit=100_000,
+        measured_factor=1_200_000,
+    ),
+    Pool(
+        array="berth",
+        name="flash",
+        media=Media.FLASH,
+        drives=2,
+        usable=500 * GIB,
+        skew=1_000_000,
+        read_time=200,
+        reads_at_most=1_000 * MILLI,
+        writes_at_most=500 * MILLI,
+        drive_rate=100 * MB,
+        measured_factor=900_000,
+    ),
 )
 
 ARRAYS = (
@@ -142,6 +169,31 @@ ARRAYS = (
         volumes_at_most=5,
         hosts_at_most=3,
     ),
+    Array(
+        name="mole",
+        site="harbour",
+        reads_at_most=5_000 * MILLI,
+        writes_at_most=2_500 * MILLI,
+        uneven=1_000_000,
+        write_answer=1_000,
+        read_hit_answer=500,
+        cache=64 * GIB,
+    ),
+    Array(
+        name="berth",
+        site="harbour",
+        reads_at_most=10_000 * MILLI,
+        writes_at_most=5_000 * MILLI,
+        uneven=1_000_000,
+        write_answer=100,
+        read_hit_answer=150,
+        cache=32 * GIB,
+    ),
+)
+
+TENANTS = (
+    Tenant(name="cruise", requests_cap=200 * MILLI),
+    Tenant(name="freight", rate_cap=2 * MB, plan_for_cap=True),
 )
 
 RULES = (
@@ -216,11 +268,13 @@ ESTATE = Estate(
         Route(source="old", target="new", one_copy=100 * MB, together=150 * MB),
         Route(source="harbour", target="harbour", possible=False),
         Route(source="harbour", target="inland", one_copy=50 * MB, together=50 * MB),
+        Route(source="mole", target="berth", one_copy=100 * MB),
     ),
+    tenants=TENANTS,
     rules=RULES,
     windows=WINDOWS,
     controls=(
-        Control("", 8, 1_910 * GIB, 775 * MILLI),
+        Control("", 11, 2_260 * GIB, 1_275 * MILLI),
         Control("inland", 1, 500 * GIB, 200 * MILLI),
     ),
 )

@@ -20,6 +20,24 @@ Wear over 1,000 days, 2 writes and a reduction of 2 cancelling: 0.1 MB/s x 86,40
 1,000 = 8.64 TB; tickets 0.15 MB/s: 12.96 TB, and once 200 GiB / 2 x 4/3 =
 0.143165576533... TB.
 
+The tenant `cruise` may ask for 200 requests/s.  At 10:00 songs and films ask for 300 +
+100: each gets half, and with films doubled at the horizon 200 / 500 = 0.4; at 02:00
+they ask for 70, later 90, and get all.  `freight` is planned for its 2 MB/s: manifests
+count four times at 02:00 and twice at 10:00, 200 reads/s in both.
+
+* `mole/disks` positions in 10 ms, sequential reads once in 100 kB; its drives are
+  measured at 1.2 times the model.  10:00: of 120 reads of songs 40 % hit, 72 are left,
+  and 30 writes; of 50 reads of films half hit, 25 are left: 5 are random, the others
+  read 200 kB and position twice.  (109 x 10 ms + 1.27 MB / 100 MB/s) x 1.2 / 10 =
+  13.2324 %.  Planned, films alone: 80 reads, 40 left, 8 random, 3.2 positions for 320
+  kB: (112 ms + 4 ms) x 1.2 / 10 = 1.392 %.
+* `berth/flash` has half the cache of `mole`, so 20 % of the reads of songs hit there;
+  measured at 0.9 times.  Manifests: (0.2 + 0.02) x 0.9 / 2 = 9.9 %; planned at 10:00
+  with songs: 76.8 reads / 1000 + 24 writes / 500 + 1.008 MB / 100 MB/s = 0.13488, so
+  0.35488 x 0.9 / 2 = 15.9696 %.
+* Controllers serve hits too.  `mole`: 170 / 5000 + 30 / 2500 = 4.6 %, planned 80 reads:
+  1.6 %.  `berth`: 200 / 10000 = 2 %, planned 296 / 10000 + 24 / 5000 = 3.44 %.
+
 Responses [µs], wait = u S / (2 (1 - u)): the comments beside the placements.
 """
 
@@ -107,6 +125,39 @@ PLACEMENTS = (
         response_today=8_000,
         response_planned=8_000,
     ),
+    # A read holds 10,000 + 100 and waits 0.132324 x 10,100 / 1.735352 = 770.1;
+    # 10,870.1 x 1.2 = 13,044.2; 0.4 x 500 + 0.6 x 13,044.2 = 8,026.5; a fifth are
+    # writes of 1,000.  Planned with the loads of today: 96 reads left, 30 writes and
+    # 1.26 MB are 0.1686; (0.1686 + 0.22) x 0.9 / 2 = 0.17487;
+    # 300 + 0.17487 x 1,100 / 1.65026 = 416.6, x 0.9 = 374.9;
+    # 0.2 x 150 + 0.8 x 374.9 = 329.9; a fifth are writes of 100.
+    Placed(
+        volume="mole/songs",
+        source="mole/disks",
+        target="berth/flash",
+        reason=Reason.RELIEF,
+        response_today=6_622,
+        response_planned=284,
+    ),
+    # Positions for 0.2 + 0.8 x 10 kB / 100 kB = 0.28 of its reads: 2,800 + 100, waits
+    # 0.132324 x 2,900 / 1.735352 = 221.1; 3,121.1 x 1.2 = 3,745.4, half hit in 500.
+    # Planned with the loads of today: (70 ms + 2.5 ms) x 1.2 / 10 = 0.0087; 2,900 +
+    # 0.0087 x 2,900 / 1.9826 = 2,912.7; x 1.2 = 3,495.3.
+    Placed(
+        volume="mole/films",
+        source="mole/disks",
+        target="mole/disks",
+        response_today=2_123,
+        response_planned=1_998,
+    ),
+    # (300 + 0.099 x 1,100 / 1.802) x 0.9 = 324.4; planned as songs: 374.9.
+    Placed(
+        volume="berth/manifests",
+        source="berth/flash",
+        target="berth/flash",
+        response_today=325,
+        response_planned=375,
+    ),
 )
 
 MOVES = (
@@ -170,6 +221,19 @@ MOVES = (
         cutover=at(3, 28, 1),
         released=at(4, 10, 22),
     ),
+    # Held for the 21 days of its snapshots, not for 14.
+    Move(
+        id="m6",
+        volume="mole/songs",
+        source="mole/disks",
+        target="berth/flash",
+        size=100 * GIB,
+        starts=at(3, 27, 22, 18),
+        ends=at(3, 27, 22, 36),
+        window="third-b",
+        cutover=at(3, 28, 1),
+        released=at(4, 17, 22),
+    ),
 )
 
 BOOKINGS = (
@@ -220,6 +284,14 @@ BOOKINGS = (
         ends=at(3, 27, 22, 18),
         rate=50 * MB,
     ),
+    # 18 min x 100 MB/s = 108 GB for 100 GiB; the 20 GiB of snapshots stay behind.
+    Booking(
+        move="m6",
+        window="third-a",
+        starts=at(3, 27, 22, 18),
+        ends=at(3, 27, 22, 36),
+        rate=100 * MB,
+    ),
 )
 
 MOVED_ONCE = 200 * GIB / 2 * 4 / 3 / 1e12
@@ -245,6 +317,12 @@ TABLE: tuple[tuple[str, str, str, Side, Side], ...] = (
     ("inland", "array-volumes", "volumes", (1, 5, ""), (3, 5, "")),
     ("new", "array-hosts", "hosts", (1, 4, ""), (2, 4, "")),
     ("inland", "array-hosts", "hosts", (1, 3, ""), (1, 3, "")),
+    ("mole/disks", "pool-room", "GiB", (320, 850, ""), (200, 850, "")),
+    ("berth/flash", "pool-room", "GiB", (60, 425, ""), (180, 425, "")),
+    ("mole/disks", "pool-busy", "%", (13.2324, 70, "10:00"), (1.392, 70, "10:00")),
+    ("berth/flash", "pool-busy", "%", (9.9, 70, "02:00"), (15.9696, 70, "10:00")),
+    ("mole", "controller-busy", "%", (4.6, 70, "10:00"), (1.6, 70, "10:00")),
+    ("berth", "controller-busy", "%", (2, 70, "02:00"), (3.44, 70, "10:00")),
 )
 USES = tuple(
     Use(
@@ -269,10 +347,11 @@ GOALS = (
     Goal(name="money", value=50_000, reached=50_000, bound=50_000, unit="hundredths"),
     # Promised at 70 % busy: flash read 300 + 0.7 x 1,100 / 0.6 = 1,583.3; tickets
     # 8 x 125/s x (12.989 - 1.287) + 2 x 100/s x (16.112 - 1.584); logs lose
-    # 20/s x (5.575 - 0.206).
-    Goal(name="relief", value=14_500.22, reached=14_600, bound=14_600, unit="ms/s"),
-    # 100 + 100 + 300 + 50 + 60 GiB and five cutovers of 10 GiB.
-    Goal(name="effort", value=660, reached=660, bound=660, unit="GiB"),
+    # 20/s x (5.575 - 0.206).  Songs: 1,583.3 x 0.9 = 1,425; 0.2 x 150 + 0.8 x 1,425 =
+    # 1,170, with writes 956; 2 x 150/s (of 300 asked) x (6.622 - 0.956) = 1,699.8.
+    Goal(name="relief", value=16_200.02, reached=16_300, bound=16_300, unit="ms/s"),
+    # 100 + 100 + 300 + 50 + 60 + 100 GiB and six cutovers of 10 GiB.
+    Goal(name="effort", value=770, reached=770, bound=770, unit="GiB"),
 )
 
 PLAN = Plan(

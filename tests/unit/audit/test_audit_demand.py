@@ -9,8 +9,8 @@ from placer.audit.demand import (
     GRAIN,
     busiest,
     busiest_requests,
+    grown,
     growth,
-    loads,
     months_of_nights,
     size,
 )
@@ -59,8 +59,8 @@ def test_thin_volumes_grow_up_to_what_is_provisioned(
 
 
 def test_loads_keep_their_order_and_round_up() -> None:
-    assert loads(VOLUME, 0)[:4] == (3 * GRAIN, GRAIN, 7 * GRAIN, 5 * GRAIN)
-    third = loads(replace(VOLUME, load_growth=100_000), 1)[0]
+    assert grown(VOLUME, 0)[:4] == (3 * GRAIN, GRAIN, 7 * GRAIN, 5 * GRAIN)
+    third = grown(replace(VOLUME, load_growth=100_000), 1)[0]
     assert 0 < third - 3 * GRAIN * growth(100_000, 1) < 1
 
 
