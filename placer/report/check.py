@@ -1,6 +1,6 @@
 """What was read and what is wrong with it, as text for a terminal."""
 
-from collections.abc import Iterable, Iterator
+from collections.abc import Iterable, Iterator, Sequence
 from itertools import groupby
 from typing import Protocol
 
@@ -8,6 +8,7 @@ from placer.estate import Assumption, Estate
 from placer.findings import Finding, Severity, errors, in_order
 from placer.report.paragraphs import paragraph, table
 from placer.report.summary import counted
+from placer.report.today import Compared, today_lines
 
 _SUMS = ("sums", "volumes", "provisioned GiB", "occupied GiB", "requests/s", "MB/s")
 _TITLES = {
@@ -49,9 +50,10 @@ def check_text(
     estate: Estate | None,
     findings: Iterable[Finding],
     totals: Iterable[Sums] = (),
+    compared: Sequence[Compared] | None = None,
     width: int = 80,
 ) -> str:
-    """Return totals, assumptions and findings of an inventory; what to do stands last.
+    """Return what an inventory adds up to and all remarks; what to do stands last.
 
     Parameters
     ----------
@@ -61,11 +63,14 @@ def check_text(
         Remarks on the inventory.
     totals
         What was read, to compare with the spreadsheet's own sums.
+    compared
+        The model against what was measured; None where nothing was modelled.
     width
         [characters] how long a line may be.
     """
     found = in_order(findings)
     parts = [_totals(totals, width)]
+    parts += [] if compared is None else [today_lines(compared, width)]
     parts += [] if estate is None else [_assumed(estate, width)]
     parts += [_group(severity, found, width) for severity in Severity]
     parts += [paragraph(f"{counted(found)}. {_next(found)}", width)]

@@ -106,6 +106,16 @@ def choice(options: type[StrEnum]) -> Kind:
     )
 
 
+def blank_if_zero(kind: Kind) -> Kind:
+    """Return a kind whose zero, which means none or unknown, stands as a blank."""
+    return Kind(
+        lambda value, zone: kind.cell(value, zone) if value else None,
+        lambda raw: 0 if raw is None else kind.read(raw),
+        f"{kind.expects} or nothing",
+        kind.number_format,
+    )
+
+
 TEXT = Kind(lambda value, _zone: escape(value), _read_text, "text", "@")
 WHOLE = Kind(lambda value, _zone: value, _read_whole, "a whole number", "#,##0")
 REAL = Kind(

@@ -7,8 +7,8 @@ from openpyxl.workbook import Workbook
 from placer.estate import Estate, Policy
 from placer.findings import Finding, in_order
 from placer.plan import Plan
-from placer.tally import Night, finish, nights, shares
-from placer.words import status, stopped
+from placer.tally import Night, Share, finish, nights, shares
+from placer.words import REASONS, status, stopped
 from placer.workbook import style
 from placer.workbook.cellkinds import (
     GIBIBYTES,
@@ -42,6 +42,12 @@ _NIGHT: Sequence[Heading] = (
     ("cutovers", WHOLE),
     ("busiest (MB/s)", MEGABYTES_PER_SECOND),
 )
+_REASON: Sequence[Heading] = (
+    ("moves by reason", TEXT),
+    ("moves", WHOLE),
+    ("copied (GiB)", GIBIBYTES),
+    ("why the volume moves", TEXT),
+)
 _ASSUMPTION: Sequence[Heading] = (
     ("sheet", TEXT),
     ("column", TEXT),
@@ -64,15 +70,12 @@ def summary(book: Workbook, estate: Estate, plan: Plan, verdict: str) -> None:
     grid = Grid(book.create_sheet(SUMMARY))
     grid.title(f"Plan for {plan.inventory}")
     grid.line(status(plan), style.BOLD)
-    if verdict:
-        grid.line(verdict)
+    for line in verdict.splitlines():
+        grid.line(line)
     grid.gap()
     grid.pairs(_counts(estate, plan), estate.policy.zone)
     grid.gap()
-    grid.listing(
-        (("moves by reason", TEXT), ("moves", WHOLE), ("copied (GiB)", GIBIBYTES)),
-        ((s.reason.value, s.moves, GIBIBYTES.cell(s.copied, "")) for s in shares(plan)),
-    )
+    grid.listing(_REASON, map(_reason, shares(plan)))
     grid.gap()
     grid.table(GOALS, plan.goals, Scope.of(estate))
     if plan.bought:
@@ -80,6 +83,12 @@ def summary(book: Workbook, estate: Estate, plan: Plan, verdict: str) -> None:
         grid.table(BOUGHT, plan.bought, Scope.of(estate))
     grid.settle()
     style.paper(grid.sheet)
+
+
+def _reason(share: Share) -> Sequence[Raw]:
+    copied = GIBIBYTES.cell(share.copied, "")
+    meaning = REASONS.get(share.reason, "")
+    return share.reason.value, share.moves, copied, meaning
 
 
 def _counts(estate: Estate, plan: Plan) -> Iterable[Pair]:

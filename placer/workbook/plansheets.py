@@ -24,7 +24,7 @@ from placer.plan import (
     Use,
 )
 from placer.tally import share_of_limit
-from placer.words import gap
+from placer.words import told
 from placer.workbook.cellkinds import (
     GIBIBYTES,
     MEGABYTES_PER_SECOND,
@@ -36,6 +36,7 @@ from placer.workbook.cellkinds import (
     WHOLE,
     Kind,
     Raw,
+    blank_if_zero,
     choice,
 )
 
@@ -49,6 +50,7 @@ class Scope:
     ids: dict[str, tuple[str, str]]
     zones: dict[str, str]
     zone: str
+    currency: str
 
     @classmethod
     def of(cls, estate: Estate) -> "Scope":
@@ -57,6 +59,7 @@ class Scope:
             {v.id: (v.array, v.name) for v in estate.volumes},
             {w.name: w.zone for w in estate.windows},
             estate.policy.zone,
+            estate.policy.currency,
         )
 
     def halves(self, volume: str) -> tuple[str, str]:
@@ -113,6 +116,7 @@ def _volume() -> tuple[Column, Column]:
 
 _FROM = Column("from", TEXT, "source")
 _TO = Column("to", TEXT, "target")
+_RESPONSE = blank_if_zero(MILLISECONDS)
 
 GOALS = Table(
     SUMMARY,
@@ -120,12 +124,12 @@ GOALS = Table(
     Goal,
     (
         Column("goal", TEXT, "name"),
-        Column("value", REAL, "value"),
-        Column("reached", REAL, "reached"),
-        Column("bound", REAL, "bound"),
+        Column("in this plan", REAL, "value"),
+        Column("best found", REAL, "reached"),
+        Column("no plan is better than", REAL, "bound"),
         Column("unit", TEXT, "unit"),
         Column("search ended", choice(Stopped), "stopped"),
-        Column("in words", TEXT, show=lambda goal, _scope: gap(goal)),
+        Column("in words", TEXT, show=lambda goal, scope: told(goal, scope.currency)),
     ),
 )
 BOUGHT = Table(
@@ -148,9 +152,9 @@ PLACEMENT = Table(
         _FROM,
         _TO,
         Column("reason", choice(Reason), "reason"),
-        Column("response today (ms)", MILLISECONDS, "response_today"),
-        Column("response planned, at least (ms)", MILLISECONDS, "response_planned"),
-        Column("response limit (ms)", MILLISECONDS, "response_limit"),
+        Column("response today (ms)", _RESPONSE, "response_today"),
+        Column("response planned, at least (ms)", _RESPONSE, "response_planned"),
+        Column("response limit (ms)", _RESPONSE, "response_limit"),
     ),
 )
 POOLS = Table(
@@ -160,14 +164,14 @@ POOLS = Table(
     (
         Column("where", TEXT, "where"),
         Column("limit", TEXT, "limit"),
-        Column("moment", choice(Moment), "moment"),
-        Column("use", REAL, "use"),
+        Column("when (planned: with growth)", choice(Moment), "moment"),
+        Column("used", REAL, "use"),
         Column("at most", REAL, "at_most"),
         Column("unit", TEXT, "unit"),
         Column(
             "share of limit (%)", REAL, show=lambda use, _scope: share_of_limit(use)
         ),
-        Column("binding hour", TEXT, "hour"),
+        Column("worst hour", TEXT, "hour"),
     ),
 )
 MOVES = Table(

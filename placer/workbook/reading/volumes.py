@@ -98,7 +98,7 @@ class VolumeReader:
             random_reads=row.whole("random reads"),
             read_hits=row.whole("read hits"),
             snapshots=row.whole("snapshots"),
-            snapshot_days=row.whole("snapshot days"),
+            snapshot_days=_snapshot_days(row),
             service_class=row.text("class"),
             response_measured=_measured(row),
             response_limit=_limit(row, of_class),
@@ -164,6 +164,12 @@ def _measured(row: Row) -> int:
     if not row.given("response measured"):
         row.assume("response measured")
     return row.whole("response measured")
+
+
+def _snapshot_days(row: Row) -> int:
+    """Return the days; a blank is an assumption only where there are snapshots."""
+    kept = row.given("snapshots") or row.given("snapshot days")
+    return row.whole("snapshot days") if kept else 0
 
 
 def _limit(row: Row, of_class: Row | None) -> int:

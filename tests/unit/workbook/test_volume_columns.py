@@ -55,6 +55,12 @@ def test_blank_shares_are_assumptions_that_count_the_cells(tmp_path: Path) -> No
     assert (assumed["snapshots"].value, assumed["snapshots"].cells) == ("0 GiB", 3)
 
 
+def test_days_are_assumed_only_for_snapshots_there_are(tmp_path: Path) -> None:
+    sheets = with_columns(**{"snapshots (GiB)": 5})
+    assumed = {a.column: a.cells for a in estate(tmp_path, sheets).assumptions}
+    assert assumed["snapshot days"] == 1
+
+
 def test_shares_are_rounded_to_the_safe_side(tmp_path: Path) -> None:
     """Random reads cost more (up), hits save (down)."""
     found = volume(
