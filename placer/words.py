@@ -2,12 +2,25 @@
 
 from math import isinf
 
-from placer.plan import Goal, Plan, Status, Stopped
+from placer.plan import Goal, Plan, Reason, Status, Stopped
 from placer.units import CENTS
 from placer.windows.clock import local
 
 PROVEN_GAP = 1e-4
-_TITLES = {"missed": "response limits missed", "effort": "copying and cutovers"}
+_TITLES = {
+    "missed": "response limits missed",
+    "relief": "relief, waiting saved",
+    "effort": "copying, cutovers counted as GiB",
+}
+_UNITS = {"steps": "steps of 10 %", "ms/s": "ms each second"}
+
+REASONS = {
+    Reason.CURE: "its pool, or a rule it stands under, is over a limit",
+    Reason.LIMIT: "its response limit is missed by less, or kept",
+    Reason.SAVE: "less has to be bought",
+    Reason.RELIEF: "it waits less there, by enough to count",
+    Reason.MAKE_ROOM: "others need its room or its share of the load",
+}
 
 CAUTIONS = (
     "No volume moves before a backup of it has been proven by a restore.",
@@ -40,7 +53,12 @@ def value(goal: Goal, currency: str = "") -> str:
     """Return a goal's value with its unit; money in whole units of the currency."""
     if goal.name == "money":
         return f"{goal.value / CENTS:,.2f} {currency}".rstrip()
-    return f"{_figure(goal.value)} {goal.unit}".rstrip()
+    return f"{_figure(goal.value)} {_UNITS.get(goal.unit, goal.unit)}".rstrip()
+
+
+def told(goal: Goal, currency: str = "") -> str:
+    """Return a goal with its value and its gap in one line."""
+    return f"{title(goal)}: {value(goal, currency)}, {gap(goal)}"
 
 
 def _figure(number: float) -> str:
@@ -51,7 +69,7 @@ def _figure(number: float) -> str:
 def gap(goal: Goal) -> str:
     """Say how far a goal's value may be from the best that any plan could reach."""
     if isinf(goal.bound):
-        words = "no bound known"
+        words = "how far from the best possible is not known"
     elif goal.gap <= PROVEN_GAP:
         words = "proven best"
     else:
@@ -84,6 +102,9 @@ def status(plan: Plan) -> str:
         return f"No plan is possible: {count(len(plan.shortages), 'shortage')} listed."
     if not plan.moves and not plan.left:
         return "Nothing has to move."
-    words = "Proven best" if plan.status is Status.PROVEN else "Within the gap stated"
-    left = f"; {count(len(plan.left), 'move')} left over" if plan.left else ""
-    return f"{words}: {count(len(plan.moves), 'move')}{left}."
+    words = count(len(plan.moves), "move")
+    if plan.left:
+        words += f", and {count(len(plan.left), 'move')} left over"
+    if plan.status is Status.PROVEN:
+        return f"Proven best plan: {words}."
+    return f"Best plan found, how near the best is told by goal: {words}."

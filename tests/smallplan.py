@@ -9,6 +9,7 @@ from placer.estate import (
     Assumption,
     Control,
     Estate,
+    Expansion,
     Hour,
     Load,
     Media,
@@ -82,7 +83,13 @@ ESTATE = Estate(
         volume("cam-01", "fast"),
     ),
     pools=(
-        Pool(array="quay", name="fast", media=Media.FLASH, drives=8),
+        Pool(
+            array="quay",
+            name="fast",
+            media=Media.FLASH,
+            drives=8,
+            expansion=Expansion(drives=4, price=61_702, at_most=3),
+        ),
         Pool(array="quay", name="slow", media=Media.SPINNING, drives=24),
     ),
     arrays=(Array(name="quay", site="harbour"),),

@@ -1,7 +1,7 @@
 """What came out, as text for a terminal: the whole on one screen, the verdict last."""
 
 from collections import Counter
-from collections.abc import Iterable, Iterator, Sequence
+from collections.abc import Callable, Iterable, Iterator, Sequence
 from itertools import islice
 
 from placer.estate import Estate
@@ -10,13 +10,26 @@ from placer.plan import Moment, Plan, Status, Use
 from placer.report.paragraphs import paragraph, table
 from placer.tally import Total, finish, nights, share_of_limit, shares, totals
 from placer.units import CENTS, MILLI, gib
-from placer.words import clock, count, gap, status, title, value
+from placer.words import clock, count, status, told
 
 _LIMITS = (("room", "pool-room"), ("busiest hour", "pool-busy"), ("wear", "pool-wear"))
 _SOME = 4
+_IN_TABLE = "over-limit-today"
 _HANGING = "    "
 
 Uses = dict[tuple[str, str, Moment], Use]
+
+
+def _growth(estate: Estate) -> str:
+    return f"with the growth of {count(estate.policy.horizon_months, 'month')}"
+
+
+_THEN: dict[Moment, Callable[[Estate], str]] = {
+    Moment.PLANNED: lambda estate: f"planned: {_growth(estate)}",
+    Moment.NEAREST: lambda estate: (
+        f"nearest: least over the limits, {_growth(estate)}; no plan, do not carry out"
+    ),
+}
 
 
 def plan_text(
@@ -35,19 +48,22 @@ def plan_text(
     plan
         The plan, or the shortages where no plan is possible.
     findings
-        Remarks on the inventory and on the plan; they are only counted here.
+        Remarks on the inventory and on the plan: counted, and where no plan is
+        possible the warnings are told, for one of them may be the cause.
     verdict
         What the audit said, and where the files are; stands last.
     width
         [characters] how long a line may be.
     """
+    found = tuple(findings)
     parts = [
         paragraph(inventory_line(estate, plan.inventory), width),
         _pools(estate, plan, width),
         _moves(estate, plan, width),
         _goals(estate, plan, width),
         _lacking(plan, width),
-        _trust(estate, findings, width),
+        _warnings(plan, found, width),
+        _trust(estate, found, width),
         [
             *paragraph(status(plan), width),
             *(line for said in verdict.splitlines() for line in paragraph(said, width)),
@@ -86,7 +102,7 @@ def _pools(estate: Estate, plan: Plan, width: int) -> list[str]:
         (pool.id, *(_change(pool.id, limit, then, uses) for _, limit in _LIMITS))
         for pool in estate.pools
     ]
-    return table([head, *rows], width)
+    return [*table([head, *rows], width), *paragraph(_THEN[then](estate), width)]
 
 
 def _change(where: str, limit: str, then: Moment, uses: Uses) -> str:
@@ -134,7 +150,11 @@ def _bought(estate: Estate, plan: Plan) -> list[str]:
     if not plan.bought:
         return []
     policy = estate.policy
-    steps = ", ".join(f"{count(b.steps, 'step')} for {b.pool}" for b in plan.bought)
+    drives = {p.id: p.expansion.drives for p in estate.pools if p.expansion}
+    steps = ", ".join(
+        f"{count(b.steps, 'step')} of {count(drives[b.pool], 'drive')} for {b.pool}"
+        for b in plan.bought
+    )
     price = sum(b.price for b in plan.bought) / CENTS
     budget = f"{price:,.2f} of {policy.budget / CENTS:,.2f} {policy.currency}".rstrip()
     return [f"To buy: {steps}: {budget}"]
@@ -145,11 +165,7 @@ def _goals(estate: Estate, plan: Plan, width: int) -> list[str]:
     return [
         line
         for goal in plan.goals
-        for line in paragraph(
-            f"{title(goal)}: {value(goal, estate.policy.currency)}, {gap(goal)}",
-            width,
-            rest=_HANGING,
-        )
+        for line in paragraph(told(goal, estate.policy.currency), width, rest=_HANGING)
     ]
 
 
@@ -167,6 +183,18 @@ def _some(said: Sequence[str], width: int) -> Iterator[str]:
         yield from paragraph(text, width, "- ", "  ")
     if len(said) > _SOME:
         yield f"  and {len(said) - _SOME} more, in the plan file"
+
+
+def _warnings(plan: Plan, findings: Sequence[Finding], width: int) -> list[str]:
+    """Return the warnings that may explain why there is no plan."""
+    if plan.status is not Status.NO_PLAN:
+        return []
+    said = [
+        f"{finding.place}: {finding.sentence}"
+        for finding in findings
+        if finding.severity is Severity.WARNING and finding.code != _IN_TABLE
+    ]
+    return ["Warnings about the inventory", *_some(said, width)] if said else []
 
 
 def _trust(estate: Estate, findings: Iterable[Finding], width: int) -> list[str]:

@@ -10,7 +10,7 @@ from placer.plan import Plan
 from placer.tally import Night, Total, nights, totals
 from placer.units import GIB, MILLI
 from placer.windows.clock import local
-from placer.words import CAUTIONS, clock, count
+from placer.words import CAUTIONS, clock, count, status
 from placer.workbook import style
 from placer.workbook.cellkinds import (
     MEGABYTES_PER_SECOND,
@@ -29,6 +29,7 @@ _STEP: Sequence[Heading] = (
     ("what", TEXT),
     ("move", TEXT),
     ("volume", TEXT),
+    ("host", TEXT),
     ("from", TEXT),
     ("to", TEXT),
     ("rate (MB/s)", MEGABYTES_PER_SECOND),
@@ -38,18 +39,25 @@ _STEP: Sequence[Heading] = (
     ("remark", TEXT),
 )
 _CONTROL: Sequence[Heading] = (
-    ("totals", TEXT),
-    ("of", TEXT),
-    ("owner's", REAL),
-    ("inventory", REAL),
+    ("array", TEXT),
+    ("total", TEXT),
+    ("by its owner", REAL),
+    ("in the inventory", REAL),
 )
-_HAND_WRITTEN = {10: 10, 11: 18}
+_HAND_WRITTEN = {11: 10, 12: 18}
+_SIGNED = "Change no. ________   Approved by ____________   Operator ____________"
+_UNAUDITED = "This plan has not been audited: do not carry it out."
 
 
-def run_sheet(book: Workbook, estate: Estate, plan: Plan) -> None:
+def run_sheet(book: Workbook, estate: Estate, plan: Plan, verdict: str) -> None:
     """Write cautions, the owner's totals, and every step in clock order."""
     grid = Grid(book.create_sheet(RUN_SHEET))
-    grid.title(f"Run sheet for {plan.inventory}")
+    grid.title(f"Run sheet for {plan.inventory}, plan from {plan.start}")
+    grid.line(status(plan))
+    grid.line((verdict or _UNAUDITED).splitlines()[0], style.BOLD)
+    grid.gap()
+    grid.line(_SIGNED)
+    grid.gap()
     grid.line("Before anything starts", style.BOLD)
     for number, caution in enumerate(CAUTIONS, start=1):
         grid.line(f"{number}.  {caution}")
@@ -133,6 +141,7 @@ def _row(step: Step, section: Section) -> Sequence[Raw]:
         escape(step.what),
         escape(move.id),
         escape(move.volume),
+        escape(step.host),
         escape(move.source),
         escape(move.target),
         None if step.rate is None else MEGABYTES_PER_SECOND.cell(step.rate, zone),

@@ -76,7 +76,7 @@ def build(
     book = Workbook()
     book.remove(book.worksheets[0])
     planpages.summary(book, estate, plan, verdict)
-    run_sheet(book, estate, plan)
+    run_sheet(book, estate, plan, verdict)
     for table in (PLACEMENT, POOLS, MOVES, BOOKINGS):
         _table(book, table, estate, plan)
     planpages.night_list(book, estate, plan)

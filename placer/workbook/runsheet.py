@@ -5,7 +5,7 @@ A step outside every window (a source whose hold ends) stands under its day.
 
 from collections import defaultdict
 from collections.abc import Iterator
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from itertools import pairwise
 
 from placer.estate import Estate, Window
@@ -17,13 +17,17 @@ _ORDER = ("release source", "copy ends", "pause", "cut over", "go on", "start co
 
 @dataclass(frozen=True, slots=True)
 class Step:
-    """One thing to do at one instant [min UTC]; rate [B/s] and latest may be absent."""
+    """One thing to do at one instant [min UTC]; rate [B/s] and latest may be absent.
+
+    ``host`` is the one that uses the volume, blank where the inventory names none.
+    """
 
     instant: int
     what: str
     move: Move
     rate: int | None = None
     latest: int | None = None
+    host: str = ""
 
     @property
     def rank(self) -> tuple[int, int, str]:
@@ -52,7 +56,9 @@ def sections(estate: Estate, plan: Plan) -> list[Section]:
     by_window: dict[str, list[Step]] = defaultdict(list)
     by_day: dict[str, list[Step]] = defaultdict(list)
     zone = estate.policy.zone
-    for name, step in _steps(estate, plan):
+    hosts = {v.id: v.host for v in estate.volumes}
+    for name, bare in _steps(estate, plan):
+        step = replace(bare, host=hosts.get(bare.move.volume, ""))
         home = name if name in windows else _window_at(step.instant, estate.windows)
         day = local(step.instant, zone).date().isoformat()
         (by_window[home] if home else by_day[day]).append(step)

@@ -5,8 +5,8 @@ from dataclasses import replace
 import pytest
 from smallplan import NO_PLAN, PLAN, at
 
-from placer.plan import Goal, Status, Stopped
-from placer.words import clock, gap, status, stopped, value
+from placer.plan import Goal, Reason, Status, Stopped
+from placer.words import REASONS, clock, gap, status, stopped, value
 
 
 def goal(value_: float, bound: float, stop: Stopped = Stopped.DONE) -> Goal:
@@ -28,7 +28,7 @@ def goal(value_: float, bound: float, stop: Stopped = Stopped.DONE) -> Goal:
         (goal(10_000, 9_996), "within 0.04 % of the best possible"),
         (goal(10, 8), "within 20 % of the best possible"),
         (goal(10, 8, Stopped.TIME), "within 20 % of the best possible (time limit)"),
-        (goal(10, float("-inf")), "no bound known"),
+        (goal(10, float("-inf")), "how far from the best possible is not known"),
     ],
 )
 def test_the_gap_in_words(given: Goal, said: str) -> None:
@@ -51,16 +51,22 @@ def test_money_is_told_in_the_currency() -> None:
 
 
 def test_figures_have_as_many_digits_as_anybody_reads() -> None:
-    assert value(goal(2, 2)) == "2 steps"
-    assert value(goal(12.34567, 0)) == "12.35 steps"
-    assert value(goal(16461.63061, 0)) == "16,462 steps"
+    assert value(goal(2, 2)) == "2 steps of 10 %"
+    assert value(goal(12.34567, 0)) == "12.35 steps of 10 %"
+    assert value(goal(16461.63061, 0)) == "16,462 steps of 10 %"
 
 
 def test_the_status_says_what_to_make_of_the_plan() -> None:
     assert status(NO_PLAN).startswith("No plan is possible: 1 shortage listed")
-    assert status(PLAN) == "Within the gap stated: 2 moves; 1 move left over."
+    assert status(PLAN).endswith("told by goal: 2 moves, and 1 move left over.")
+    proven = replace(PLAN, left=(), status=Status.PROVEN)
+    assert status(proven) == "Proven best plan: 2 moves."
     nothing = replace(PLAN, moves=(), left=(), status=Status.PROVEN)
     assert status(nothing) == "Nothing has to move."
+
+
+def test_every_reason_to_move_is_explained() -> None:
+    assert set(REASONS) == set(Reason) - {Reason.STAYS}
 
 
 def test_the_search_ended_as_its_first_goal_cut_short() -> None:

@@ -61,6 +61,7 @@ def test_without_a_plan_the_pools_show_how_near_it_gets() -> None:
         use("pool-room", Moment.NEAREST, 2.05),
     )
     text = plan_text(ESTATE, replace(NO_PLAN, uses=uses))
+    assert "no plan, do not carry out" in " ".join(text.split())
     assert "% of limit, today -> nearest" in text
     assert "50 -> 205" in text
 
@@ -77,12 +78,25 @@ def test_nights_are_told_with_their_clock_times() -> None:
 
 
 def test_goals_carry_their_gap_in_words() -> None:
-    assert "response limits missed: 2 steps, proven best" in plan_text(ESTATE, PLAN)
+    assert "response limits missed: 2 steps of 10 %, proven best" in plan_text(
+        ESTATE, PLAN
+    )
 
 
 def test_what_is_bought_is_told_with_the_budget() -> None:
-    said = "To buy: 2 steps for quay/fast: 1,234.05 of 5,000.00 crowns"
+    said = "To buy: 2 steps of 4 drives for quay/fast: 1,234.05 of 5,000.00 crowns"
     assert said in plan_text(ESTATE, PLAN)
+
+
+def test_what_is_planned_is_told_with_the_months_of_its_growth() -> None:
+    text = plan_text(ESTATE, PLAN)
+    assert f"with the growth of {ESTATE.policy.horizon_months} months" in text
+
+
+def test_warnings_are_told_where_no_plan_is_possible() -> None:
+    """One of them may be the cause, as where no window is open."""
+    assert "- volumes!H7: =1+1 is text." in plan_text(ESTATE, NO_PLAN, FINDINGS)
+    assert "volumes!H7" not in plan_text(ESTATE, PLAN, FINDINGS)
 
 
 def test_a_shortage_is_told_with_its_remedy() -> None:

@@ -10,7 +10,8 @@ from hypothesis import strategies as st
 from openpyxl import load_workbook
 from smallplan import ESTATE, FINDINGS, NO_PLAN, PLAN, renamed
 
-from placer.plan import Plan
+from placer.plan import Plan, Reason
+from placer.words import REASONS
 from placer.workbook.planbook import PlanFileError, build, read, write
 
 
@@ -23,6 +24,13 @@ def path(tmp_path: Path) -> Path:
 def test_a_plan_comes_back_as_it_was_written(path: Path, plan: Plan) -> None:
     assert write(path, ESTATE, plan, FINDINGS, "Audited: clean.") == path
     assert read(path) == plan
+
+
+def test_no_limit_and_no_known_response_stand_as_blanks(path: Path) -> None:
+    """A limit of 0.0 ms would read as one that nothing can keep."""
+    write(path, ESTATE, PLAN)
+    rows = load_workbook(path)["placement"].iter_rows(min_row=2, values_only=True)
+    assert [row[5:] for row in rows][1:] == [(None, None, None)] * 2
 
 
 def test_an_empty_plan_comes_back(path: Path) -> None:
@@ -121,7 +129,9 @@ def test_summary_says_what_was_bought_and_how_good_the_plan_is() -> None:
     rows = [[cell.value for cell in row] for row in book["summary"].iter_rows()]
     texts = {row[0]: row for row in rows if row[0]}
     assert float(str(texts["bought (crowns)"][1])) == 1234.05
-    assert texts["missed"][6] == "proven best"
+    assert texts["missed"][6] == "response limits missed: 2 steps of 10 %, proven best"
+    reason = next(row for row in rows if row[0] == "relief")
+    assert reason[3] == REASONS[Reason.RELIEF]
     relief = texts["relief"][6]
     assert str(relief).startswith("within 0.035 % of the best possible (time limit)")
 

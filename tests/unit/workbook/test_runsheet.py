@@ -2,6 +2,7 @@
 
 from dataclasses import replace
 
+import pytest
 from openpyxl.worksheet.worksheet import Worksheet
 from smallplan import ESTATE, NO_PLAN, PLAN, at, window
 
@@ -76,7 +77,7 @@ def test_an_hour_after_the_clocks_change_carries_its_offset() -> None:
 
 def test_the_sheet_opens_with_the_cautions_and_the_owners_totals() -> None:
     text = rows(build(ESTATE, PLAN)["run sheet"])
-    opening = "\n".join(row[0] for row in text[:11])
+    opening = "\n".join(row[0] for row in text[:17])
     assert all(caution in opening for caution in CAUTIONS)
     controls = [row[1:4] for row in text if row[0] == "all"]
     assert controls == [
@@ -84,6 +85,28 @@ def test_the_sheet_opens_with_the_cautions_and_the_owners_totals() -> None:
         ["GiB", "300.0", "300.0"],
         ["requests/s", "2700.0", "2700.0"],
     ]
+
+
+@pytest.mark.parametrize(
+    ("verdict", "said"),
+    [
+        ("", "This plan has not been audited: do not carry it out."),
+        ("The audit REFUSES this plan.\n  hold: M001", "The audit REFUSES this plan."),
+    ],
+)
+def test_the_sheet_says_what_the_audit_said(verdict: str, said: str) -> None:
+    """A refused plan must not look on paper like one to carry out."""
+    text = rows(build(ESTATE, PLAN, verdict=verdict)["run sheet"])
+    assert said in [row[0] for row in text[:4]]
+
+
+def test_a_step_names_the_host_of_its_volume() -> None:
+    first, *others = ESTATE.volumes
+    estate = replace(ESTATE, volumes=(replace(first, host="bk-01"), *others))
+    sheet = rows(build(estate, PLAN)["run sheet"])
+    head = next(row for row in sheet if row[0] == "time")
+    hosts = {row[head.index("host")] for row in sheet if row[3] == first.id}
+    assert hosts == {"bk-01"}
 
 
 def test_each_window_begins_a_page_and_repeats_the_headers() -> None:
