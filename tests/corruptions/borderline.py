@@ -3,18 +3,23 @@
 from corruptions.damage import (
     Pair,
     array,
+    both,
     estate,
     goal,
     move,
     placed,
     policy,
+    pool,
     route,
+    stated,
+    tenant,
     use,
+    volume,
     window,
 )
 from corruptions.harbour import at
 from placer.estate import Control, Host, Rule, RuleKind
-from placer.units import GIB, MB
+from placer.units import GIB, KB, MB, MILLI
 
 CLEAN: dict[str, Pair] = {
     "money to the last hundredth": policy(budget=50_000),
@@ -51,4 +56,42 @@ CLEAN: dict[str, Pair] = {
         hosts=(Host(name="office", arrays=("old",)),)
     ),
     "a cutover that ends with its window": move("m5", cutover=at(3, 28, 5)),
+    "room to the last byte of the snapshots": both(
+        pool("berth/flash", fill_ceiling=360_000),
+        stated("berth/flash", "pool-room", 180),
+    ),
+    "drives as busy as they may be": both(
+        pool("mole/disks", busy_ceiling=13_920),
+        stated("mole/disks", "pool-busy", 1.392),
+    ),
+    "controllers as busy as they may be": both(
+        array("mole", controller_ceiling=16_000),
+        stated("mole", "controller-busy", 1.6),
+    ),
+    "a hold as long as snapshots are kept": volume("mole/songs", hold_days=21),
+    "a hold longer than snapshots are kept": volume(
+        "mole/songs", hold_days=21, snapshot_days=20
+    ),
+    "snapshots kept for a fortnight": volume("old/mail", snapshot_days=14),
+    "snapshots of a volume that stays": volume("new/books", snapshot_days=90),
+    "a tenant that asks for what it may": tenant(
+        "old/mail", requests_cap=50 * MILLI, rate_cap=500 * KB
+    ),
+    "a plan for caps that are reached": tenant(
+        "old/mail", requests_cap=50 * MILLI, rate_cap=500 * KB, plan_for_cap=True
+    ),
+    "a tenant that asks for less": tenant("old/mail", requests_cap=51 * MILLI),
+    "a plan for the tighter cap": tenant(
+        "old/mail", requests_cap=99 * MILLI, rate_cap=500 * KB, plan_for_cap=True
+    ),
+    "a plan for caps that are not": tenant("old/mail", plan_for_cap=True),
+    "a volume that only writes hits nothing": volume(
+        "inland/backup", read_hits=1_000_000
+    ),
+    "a cache that divides into no other": array("new", cache=123_456_789_013),
+    "flash fetches no units": pool("berth/flash", prefetch_unit=0),
+    "no unit where all reads are random": pool("old/spin", prefetch_unit=0),
+    "sequential reads of flash": volume("berth/manifests", random_reads=0),
+    "drives measured busier": pool("mole/disks", busy_measured=900_000),
+    "controllers measured busier": array("mole", busy_measured=900_000),
 }

@@ -6,7 +6,7 @@ from typing import Any
 
 from corruptions.harbour import ESTATE
 from corruptions.sailing import PLAN
-from placer.estate import Estate
+from placer.estate import Estate, Tenant
 from placer.plan import Plan
 
 Pair = tuple[Estate, Plan]
@@ -124,3 +124,17 @@ def use(where: str, limit: str, moment: str, **changes: Any) -> Pair:
     key = where, limit, moment
     uses = _edited(PLAN.uses, lambda u: (u.where, u.limit, u.moment) == key, changes)
     return plan(uses=uses)
+
+
+def stated(where: str, limit: str, at_most: float) -> Pair:
+    """Return the pair with one limit stated otherwise, for today and planned."""
+    place = where, limit
+    changes = {"at_most": at_most}
+    return plan(uses=_edited(PLAN.uses, lambda u: (u.where, u.limit) == place, changes))
+
+
+def tenant(name: str, **caps: Any) -> Pair:
+    """Return the pair with one volume the only one of a tenant of its own."""
+    theirs = volume(name, tenant="own")[0].volumes
+    tenants = (*ESTATE.tenants, Tenant(name="own", **caps))
+    return estate(volumes=theirs, tenants=tenants)

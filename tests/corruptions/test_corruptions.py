@@ -6,6 +6,7 @@ import pytest
 
 from corruptions import (
     damaged_claims,
+    damaged_demand,
     damaged_nights,
     damaged_placement,
     damaged_replay,
@@ -22,6 +23,7 @@ DAMAGES = (
     *damaged_nights.DAMAGES,
     *damaged_replay.DAMAGES,
     *damaged_claims.DAMAGES,
+    *damaged_demand.DAMAGES,
 )
 REGISTER = Path(__file__).parents[2] / "DEVELOPERS.md"
 
