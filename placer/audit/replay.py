@@ -40,18 +40,18 @@ class Span:
     total: Sequence[int]
     today: Sequence[int]
 
-    def whole(self, _: int) -> int:
-        """Return the highest sum within the limit, in any hour."""
-        return self.gauge.most
+    def whole(self) -> list[int]:
+        """Return the highest sum within the limit, the same in every hour."""
+        return [self.gauge.most] * len(self.total)
 
-    def allowed(self, hour: int) -> int:
-        """Return the highest sum the first-day rule allows in an hour."""
-        before = self.today[hour]
-        return max(self.gauge.most, before + int(before * SLACK))
+    def allowed(self) -> list[int]:
+        """Return the highest sum the first-day rule allows in each hour."""
+        most, (part, of) = self.gauge.most, SLACK.as_integer_ratio()
+        return [max(most, before + before * part // of) for before in self.today]
 
-    def worst(self, over: Callable[[int], int]) -> int | None:
+    def worst(self, most: Sequence[int]) -> int | None:
         """Return the first hour that is furthest over what it may be, if any is."""
-        beyond = [part - over(hour) for hour, part in enumerate(self.total)]
+        beyond = [part - may for part, may in zip(self.total, most, strict=True)]
         top = max(beyond, default=0)
         return beyond.index(top) if top > 0 else None
 
@@ -117,7 +117,7 @@ def first_day(code: str) -> Callable[[Case], Iterator[str]]:
     def rule(case: Case) -> Iterator[str]:
         told = set()
         for span in spans(case, code):
-            hour = span.worst(span.allowed)
+            hour = span.worst(span.allowed())
             if hour is not None and span.gauge.where not in told:
                 told.add(span.gauge.where)
                 yield _said(case, span, hour)
@@ -133,9 +133,9 @@ def cured_by(case: Case) -> Iterator[str]:
     for code in REPLAYED:
         told = set()
         for span in spans(case, code):
-            hour = span.worst(span.whole)
+            hour = span.worst(span.whole())
             late = span.until > cured and span.gauge.where not in told
-            if late and hour is not None and span.total[hour] <= span.allowed(hour):
+            if late and hour is not None and span.total[hour] <= span.allowed()[hour]:
                 told.add(span.gauge.where)
                 yield f"{_said(case, span, hour)}, to be cured by {said(case, cured)}"
 
