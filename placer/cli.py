@@ -27,11 +27,11 @@ from placer.report.record import dump
 from placer.report.summary import plan_text
 from placer.report.verdict import verdict_text
 from placer.survey import survey
-from placer.words import gap, title, value
+from placer.words import told
 from placer.workbook import blank as blank_workbook
 from placer.workbook import intake, planbook
 from placer.workbook.reading.control import Total
-from placer.workbook.wholefile import FileOpenError, save_text
+from placer.workbook.wholefile import FileOpenError, ready, save_text
 
 OUTPUT = Path("output")
 
@@ -41,9 +41,22 @@ class Exit(IntEnum):
 
     DONE = 0
     BAD_INVENTORY = 1
+    WRONG_USE = 2
     NO_PLAN = 3
     NOTHING = 4
     REFUSED = 5
+
+
+class WrongUse(click.ClickException):
+    """A file was named that the command has no use for."""
+
+    exit_code = Exit.WRONG_USE
+
+
+class Hindered(click.ClickException):
+    """The result cannot be written."""
+
+    exit_code = Exit.NOTHING
 
 
 @dataclass(frozen=True)
@@ -62,17 +75,19 @@ def main() -> None:
     """Place volumes on flash and spinning pools, and plan the nights to get there."""
 
 
-@main.command()
+@main.command(short_help="Write an empty inventory workbook.")
 @click.argument("file", type=click.Path(path_type=Path), default="inventory.xlsx")
 def blank(file: Path) -> None:
     """Write an empty inventory workbook to FILE.
 
     Example: placer blank my-estate.xlsx
     """
+    if file.suffix.lower() != ".xlsx":
+        raise WrongUse(f"{file} is no name of a workbook: end it in .xlsx")
     click.echo(f"Wrote {_written(lambda: blank_workbook.write(file))}.")
 
 
-@main.command()
+@main.command(short_help="List every fault of an inventory, and its sums.")
 @click.argument("inventory", type=click.Path(path_type=Path))
 @click.option("--json", "as_json", is_flag=True, help="Print findings for machines.")
 def check(inventory: Path, *, as_json: bool) -> None:
@@ -81,25 +96,24 @@ def check(inventory: Path, *, as_json: bool) -> None:
     Example: placer check inventories/harbour.xlsx
     """
     opened = _open(inventory)
-    if as_json:
-        click.echo(_as_json(opened.findings))
-    else:
-        click.echo(check_text(opened.estate, opened.findings, opened.totals))
+    _tell(opened, as_json)
     sys.exit(Exit.BAD_INVENTORY if errors(opened.findings) else Exit.DONE)
 
 
-@main.command()
+@main.command(short_help="Plan placement, moves and nights; audit what was written.")
 @click.argument("inventory", type=click.Path(path_type=Path))
 @click.option(
     "--output",
     type=click.Path(path_type=Path),
     default=OUTPUT,
-    help="Folder of the plan.",
+    show_default=True,
+    help="Folder the plan is written to.",
 )
 @click.option(
     "--seconds",
     type=click.IntRange(1),
-    help="Time for the search; policy's by default.",
+    metavar="SECONDS",
+    help="Time for the search, instead of the time limit in the sheet policy.",
 )
 @click.option("--json", "as_json", is_flag=True, help="Print the plan for machines.")
 @click.option("--quiet", is_flag=True, help="Print no progress.")
@@ -112,27 +126,22 @@ def plan(
     """
     opened = _open(inventory)
     if opened.estate is None or opened.table is None or errors(opened.findings):
-        click.echo(check_text(opened.estate, opened.findings, opened.totals))
+        _tell(opened, as_json)
         sys.exit(Exit.BAD_INVENTORY)
     estate = opened.estate
-    halted = _halt_on_interrupt()
-    made = planner.plan(
-        opened.table,
-        seconds or estate.policy.time_limit,
-        Watch(halted=halted.is_set)
-        if quiet
-        else Watch(_progress(estate.policy.currency), halted.is_set),
-    )
+    path = output / f"{estate.name}-plan.xlsx"
+    _written(lambda: ready(path))
+    limit = seconds or estate.policy.time_limit
+    made = planner.plan(opened.table, limit, _watch(estate, limit, quiet))
     if made.status is Status.NO_PLAN and not made.shortages:
         click.echo("The search ended before it found any plan; nothing is written.")
         sys.exit(Exit.NOTHING)
-    found, verdict = _write(output, estate, made, opened.findings)
-    record = dump(made, estate, opened.findings)
+    found, verdict, record = _write(path, estate, made, opened.findings)
     click.echo(record if as_json else plan_text(estate, made, opened.findings, verdict))
     sys.exit(_code(made, found))
 
 
-@main.command(name="audit")
+@main.command(name="audit", short_help="Check a plan file against its inventory.")
 @click.argument("inventory", type=click.Path(path_type=Path))
 @click.argument("plan_file", metavar="PLAN", type=click.Path(path_type=Path))
 @click.option("--json", "as_json", is_flag=True, help="Print findings for machines.")
@@ -144,13 +153,13 @@ def audit_command(inventory: Path, plan_file: Path, *, as_json: bool) -> None:
     try:
         made = planbook.read(plan_file)
     except planbook.PlanFileError as error:
-        raise click.ClickException(str(error)) from error
+        raise WrongUse(str(error)) from error
     opened = _open(inventory, made.start)
     if opened.estate is None:
-        click.echo(check_text(None, opened.findings, opened.totals))
+        _tell(opened, as_json)
         sys.exit(Exit.BAD_INVENTORY)
     found = audit.judge(opened.estate, made)
-    click.echo(_as_json(found) if as_json else verdict_text(found))
+    click.echo(_as_json(found) if as_json else verdict_text(found, made.status))
     sys.exit(Exit.REFUSED if found else Exit.DONE)
 
 
@@ -164,18 +173,29 @@ def _open(path: Path, start: str = "") -> Opened:
     return Opened(read.estate, table, found, read.totals)
 
 
+def _tell(opened: Opened, as_json: bool) -> None:
+    """Print what was read and what is wrong with it."""
+    if as_json:
+        click.echo(_as_json(opened.findings))
+    else:
+        click.echo(check_text(opened.estate, opened.findings, opened.totals))
+
+
 def _write(
-    folder: Path, estate: Estate, made: Plan, findings: tuple[Finding, ...]
-) -> tuple[tuple[Finding, ...], str]:
-    """Write the plan, audit the file, write the verdict into it; return both."""
-    path = folder / f"{estate.name}-plan.xlsx"
+    path: Path, estate: Estate, made: Plan, findings: tuple[Finding, ...]
+) -> tuple[tuple[Finding, ...], str, str]:
+    """Write the plan, audit the file, write the verdict into it.
+
+    Returns what the audit found, the verdict in words, and the record for machines.
+    """
     used = _written(lambda: planbook.write(path, estate, made, findings))
     found = audit.judge(estate, planbook.read(used))
-    verdict = verdict_text(found)
+    verdict = verdict_text(found, made.status)
     _written(lambda: planbook.write(used, estate, made, findings, verdict))
-    record = dump(made, estate, findings)
+    record = dump(made, estate, (*findings, *found))
     _written(lambda: save_text(record, used.with_suffix(".json")))
-    return found, f"{verdict}\nWrote {used} and {used.with_suffix('.json').name}."
+    wrote = f"Wrote {used} and {used.with_suffix('.json').name}."
+    return found, f"{verdict}\n{wrote}", record
 
 
 def _written(write: Callable[[], Path]) -> Path:
@@ -183,9 +203,10 @@ def _written(write: Callable[[], Path]) -> Path:
     try:
         return write()
     except FileOpenError as error:
-        raise click.ClickException(str(error)) from error
+        raise Hindered(str(error)) from error
     except OSError as error:
-        raise click.ClickException(f"cannot write: {error}") from error
+        said = f"cannot write to {error.filename}: {error.strerror}"
+        raise Hindered(said) from error
 
 
 def _code(made: Plan, found: tuple[Finding, ...]) -> Exit:
@@ -196,10 +217,19 @@ def _code(made: Plan, found: tuple[Finding, ...]) -> Exit:
     return Exit.DONE
 
 
+def _watch(estate: Estate, seconds: int, quiet: bool) -> Watch:
+    """Return the watch over a search; unless quiet it tells how long and what."""
+    halted = _halt_on_interrupt()
+    if quiet:
+        return Watch(halted=halted.is_set)
+    said = f"searching for at most {seconds} s; Ctrl-C keeps the best plan found so far"
+    click.echo(said, err=True)
+    return Watch(_progress(estate.policy.currency), halted.is_set)
+
+
 def _progress(currency: str) -> Callable[[Goal], None]:
     def tell(goal: Goal) -> None:
-        said = f"{title(goal)}: {value(goal, currency)}, {gap(goal)}"
-        click.echo(said, err=True)
+        click.echo(told(goal, currency), err=True)
 
     return tell
 
@@ -210,12 +240,18 @@ def _halt_on_interrupt() -> Event:
 
     def halt(*_: object) -> None:
         halted.set()
-        signal.signal(signal.SIGINT, signal.default_int_handler)
+        signal.signal(signal.SIGINT, _end)
         said = f"{Stopped.INTERRUPT}: keeping the best plan once this step is done"
         click.echo(said, err=True)
 
     signal.signal(signal.SIGINT, halt)
     return halted
+
+
+def _end(*_: object) -> None:
+    """End the program at once, as asked by a second Ctrl-C."""
+    click.echo("interrupted again: ended", err=True)
+    sys.exit(Exit.NOTHING)
 
 
 def _as_json(findings: tuple[Finding, ...]) -> str:

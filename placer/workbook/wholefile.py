@@ -5,6 +5,7 @@ from collections.abc import Callable, Iterator
 from hashlib import sha256
 from itertools import count
 from pathlib import Path
+from tempfile import TemporaryFile
 from typing import BinaryIO
 from zipfile import BadZipFile
 
@@ -30,11 +31,25 @@ def save(book: Workbook, path: Path) -> Path:
     FileOpenError
         A lock file beside the target says that another program has it open.
     """
-    used = next(p for p in _names(path) if not p.exists() or is_untouched(p))
-    _refuse_open(used)
+    used = _used(path)
     book.properties.identifier = _content(book)
     _appear(used, book.save)
     return used
+
+
+def ready(path: Path) -> Path:
+    """Return the path that ``save`` would use, once sure that it can write there.
+
+    Raises
+    ------
+    FileOpenError
+        As ``save``.
+    OSError
+        Nothing can be written in the folder.
+    """
+    path.parent.mkdir(parents=True, exist_ok=True)
+    with TemporaryFile(dir=path.parent):
+        return _used(path)
 
 
 def save_text(text: str, path: Path) -> Path:
@@ -55,6 +70,12 @@ def _appear(path: Path, write: Callable[[BinaryIO], object]) -> None:
         part.replace(path)
     finally:
         part.unlink(missing_ok=True)
+
+
+def _used(path: Path) -> Path:
+    used = next(p for p in _names(path) if not p.exists() or is_untouched(p))
+    _refuse_open(used)
+    return used
 
 
 def _names(path: Path) -> Iterator[Path]:

@@ -134,8 +134,41 @@ def test_an_audit_of_no_plan_is_one_clear_sentence(tmp_path: Path) -> None:
     with ZipFile(stray, "w") as archive:
         archive.writestr("hello.txt", "hello")
     result = run("audit", INVENTORIES / "harbour.xlsx", stray)
-    assert result.exit_code == 1
+    assert result.exit_code == Exit.WRONG_USE
     assert result.output.startswith("Error: ")
+
+
+def test_what_hinders_the_writing_is_said_before_the_search(tmp_path: Path) -> None:
+    """Minutes of search are not spent on a plan that cannot be kept."""
+    (tmp_path / "file").write_text("in the way")
+    locked = tmp_path / "open"
+    locked.mkdir()
+    (locked / ".~lock.harbour-plan.xlsx#").write_text("somebody")
+    for folder, said in ((tmp_path / "file", "cannot write to"), (locked, "is open")):
+        result = run("plan", INVENTORIES / "harbour.xlsx", "--output", folder)
+        assert result.exit_code == Exit.NOTHING
+        assert said in result.output
+        assert "searching" not in result.output
+        assert "Errno" not in result.output
+
+
+def test_findings_are_json_where_json_is_asked_for(tmp_path: Path) -> None:
+    messy = INVENTORIES / "harbour-messy.xlsx"
+    result = run("plan", messy, "--json", "--output", tmp_path)
+    assert result.exit_code == Exit.BAD_INVENTORY
+    assert {found["severity"] for found in json.loads(result.stdout)} >= {"error"}
+
+
+def test_an_inventory_is_only_written_as_a_workbook(tmp_path: Path) -> None:
+    result = run("blank", tmp_path / "mine.csv")
+    assert result.exit_code == Exit.WRONG_USE
+    assert list(tmp_path.iterdir()) == []
+
+
+def test_the_list_of_commands_is_told_whole() -> None:
+    listed = run("--help").output.partition("Commands:")[2]
+    assert all(name in listed for name in main.commands)
+    assert "..." not in listed
 
 
 def test_an_empty_inventory_is_written_and_says_that_it_is_empty(
