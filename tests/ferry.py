@@ -53,7 +53,8 @@ ts-a,5,quay/fast,test copies A,1,archive,500-800,85,5-15,60,32,,10
 ts-b,5,quay/fast,test copies B,1,archive,500-800,85,5-15,60,32,,10
 fs,6,quay/fast,,2,office,700-1000,80,8-25,80,48,day,15
 bk-db,6,quay/bulk,booking,3,counter,400-650,85,42-70,75,8,day,10
-man-db,4,quay/bulk,manifests,2,deck,250-450,80,25-42,70,8,day,10
+man-db,3,quay/bulk,manifests,2,deck,250-450,80,25-42,70,8,day,10
+man-log,1,quay/fast,manifests,1,deck,250-450,80,25-42,5,8,day,10
 cam,9,quay/bulk,cameras,3,archive,1800-2500,90,11-17,15,256,,10
 bak,5,quay/bulk,,1,archive,2000-2600,80,8-14,20,256,night,10
 pay-db,3,depot/swift,payroll,1,office,200-400,75,150-300,65,8,day,10
@@ -130,6 +131,9 @@ ARRAYS: tuple[dict[str, object], ...] = (
         "writes at most (1/s per controller)": 11_000,
         "MB/s per controller": 2_400,
         "write answer (us)": 350,
+        "read hit answer (us)": 150,
+        "cache (GiB)": 256,
+        "controller busy measured (%)": 15,
         "one copy at most (MB/s)": 200,
         "all copies in together (MB/s)": 400,
         "all copies out together (MB/s)": 400,
@@ -143,6 +147,8 @@ ARRAYS: tuple[dict[str, object], ...] = (
         "writes at most (1/s per controller)": 7_000,
         "MB/s per controller": 1_600,
         "write answer (us)": 450,
+        "read hit answer (us)": 180,
+        "cache (GiB)": 128,
         "one copy at most (MB/s)": 150,
         "all copies in together (MB/s)": 300,
         "all copies out together (MB/s)": 300,
@@ -157,6 +163,7 @@ ARRAYS: tuple[dict[str, object], ...] = (
         "writes at most (1/s per controller)": 2_200,
         "MB/s per controller": 400,
         "write answer (us)": 900,
+        "controller busy measured (%)": 23,
         "one copy at most (MB/s)": 50,
         "all copies in together (MB/s)": 150,
         "all copies out together (MB/s)": 150,
@@ -194,6 +201,7 @@ POOLS: tuple[dict[str, object], ...] = (
         **_FLASH,
         "pool": "fast",
         "array": "quay",
+        "pool busy measured (%)": 2.5,
         "drives without spares": 12,
         "drive writes per day": 0.5,
         "wear used (%)": 88,
@@ -207,6 +215,7 @@ POOLS: tuple[dict[str, object], ...] = (
         **_SPINNING,
         "pool": "bulk",
         "array": "quay",
+        "pool busy measured (%)": 52,
         "drives without spares": 40,
         "drive size (GB)": 2000,
     },
@@ -214,6 +223,7 @@ POOLS: tuple[dict[str, object], ...] = (
         **_FLASH,
         "pool": "swift",
         "array": "depot",
+        "pool busy measured (%)": 1.7,
         "drives without spares": 6,
         "drive size (GB)": 960,
         "drive writes per day": 0.5,
@@ -228,6 +238,7 @@ POOLS: tuple[dict[str, object], ...] = (
         **_SPINNING,
         "pool": "deep",
         "array": "depot",
+        "pool busy measured (%)": 55,
         "drives without spares": 24,
         "drive size (GB)": 2000,
     },
@@ -235,6 +246,7 @@ POOLS: tuple[dict[str, object], ...] = (
         **_SPINNING,
         "pool": "mast",
         "array": "old-pier",
+        "pool busy measured (%)": 60.5,
         "drives without spares": 24,
         "data per stripe": 1,
         "parity per stripe": 1,
@@ -246,6 +258,7 @@ POOLS: tuple[dict[str, object], ...] = (
         **_SPINNING,
         "pool": "hold",
         "array": "old-pier",
+        "pool busy measured (%)": 17,
         "drives without spares": 16,
         "drive size (GB)": 1000,
     },

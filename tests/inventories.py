@@ -11,6 +11,7 @@ from random import Random
 
 import ferry
 from ferry import FAMILIES, SHAPES, Family
+from ferrymeasured import HABITS, NOTHING, RESPONSES, TENANTS, Habit
 from messy import plant
 from openpyxl import Workbook
 from openpyxl.styles import Font
@@ -48,6 +49,7 @@ def harbour() -> Sheets:
         "policy": [{"setting": k, "value": v} for k, v in ferry.POLICY.items()],
         "windows": _rows(ferry.WINDOWS),
         "classes": _rows(ferry.CLASSES),
+        "tenants": _rows(TENANTS),
         "load": [row for family, v in pairs for row in _load(family, v)],
         "hosts": _hosts(volumes),
         "routes": _rows(ferry.ROUTES),
@@ -65,15 +67,17 @@ def _volume(family: Family, number: int, random: Random) -> Row:
     array, pool = family.pool.split("/")
     size = random.randrange(family.size[0], family.size[1] + 1, 10)
     requests = random.randint(*family.requests)
+    name = f"{family.prefix}-{number:02}"
+    occupied = round(size * (family.filled + random.randint(-6, 6)) / 100)
     return {
         "array": array,
-        "volume": f"{family.prefix}-{number:02}",
+        "volume": name,
         "pool": pool,
         "host": f"{family.prefix}-host-{1 + number % family.hosts}",
         "application": family.application or None,
         "class": family.service,
         "provisioned (GiB)": size,
-        "occupied (GiB)": round(size * (family.filled + random.randint(-6, 6)) / 100),
+        "occupied (GiB)": occupied,
         "thin": "yes",
         "requests (1/s)": requests,
         "reads (%)": family.reads,
@@ -81,6 +85,19 @@ def _volume(family: Family, number: int, random: Random) -> Row:
         "capacity growth (%/year)": family.growth,
         "load growth (%/year)": 5 if family.shape else 0,
         "leave where it is": None,
+        **_habit(HABITS.get(family.prefix, NOTHING), occupied),
+        "response measured (ms)": RESPONSES.get(name),
+    }
+
+
+def _habit(habit: Habit, occupied: int) -> Row:
+    return {
+        "tenant": habit.tenant,
+        "role": habit.role,
+        "random reads (%)": habit.random,
+        "read hits (%)": habit.hits,
+        "snapshots (GiB)": round(occupied * habit.snapshots / 100) or None,
+        "snapshot days": habit.days,
     }
 
 

@@ -6,6 +6,8 @@ import pytest
 from openpyxl import Workbook, load_workbook
 
 from inventories import LEAST, PLANTED, harbour, least, main, messy, short, workbook
+from placer.candidates.table import candidates
+from placer.candidates.today import compare
 from placer.estate import Estate
 from placer.findings import errors
 from placer.workbook.intake import Intake, read
@@ -47,6 +49,38 @@ def test_the_harbour_adds_up_to_the_sums_of_its_cells() -> None:
     assert total.volumes == len(rows)
     assert total.provisioned == sum(float(str(r["provisioned (GiB)"])) for r in rows)
     assert total.requests == sum(float(str(r["requests (1/s)"])) for r in rows)
+
+
+def test_one_cap_of_the_harbour_binds_in_some_hours_and_not_in_all() -> None:
+    """Sums of the raw cells, by a plain loop over the rows."""
+    sheets = harbour()
+    members = {r["volume"] for r in sheets["volumes"] if r["tenant"] == "island line"}
+    asked = [0.0] * 24
+    for row in sheets["load"]:
+        if row["volume"] in members:
+            asked[int(str(row["hour begins"]))] += float(str(row["reads (1/s)"]))
+            asked[int(str(row["hour begins"]))] += float(str(row["writes (1/s)"]))
+    cap = next(r for r in sheets["tenants"] if r["tenant"] == "island line")
+    bound = [
+        hour
+        for hour in range(24)
+        if asked[hour] > float(str(cap["requests cap (1/s)"]))
+    ]
+    assert bound == [6, 7, 16, 17]
+
+
+def test_the_log_of_the_manifests_is_kept_from_each_of_their_data() -> None:
+    implied = [rule.volumes for rule in estate("harbour").rules if "log" in rule.said]
+    data = [f"quay/man-db-{number:02}" for number in (1, 2, 3)]
+    assert implied == [("quay/man-log-01", name) for name in data]
+
+
+def test_every_pool_was_measured_and_one_is_not_explained() -> None:
+    whole = estate("harbour")
+    assert all(pool.busy_measured for pool in whole.pools)
+    off = [each for each in compare(candidates(whole)) if not each.near]
+    assert [(each.where, each.what) for each in off] == [("old-pier/mast", "pool busy")]
+    assert off[0].ratio == pytest.approx(1.3, abs=0.01)
 
 
 def test_the_least_inventory_has_only_the_columns_people_have() -> None:
