@@ -46,11 +46,12 @@ class Chain:
         """
         nobody = np.zeros(self.program.columns)
         while time.monotonic() < deadline and self.free <= 2 * self.program.choices:
-            free = self._opened(self.relaxed.x > IN_USE, np.zeros(self.program.columns))
+            opened = self.free
+            free = self._opened(self.relaxed.x > IN_USE, nobody)
             found = self._solved(free, nobody, deadline)
             if found is not None:
                 return found
-            self.free *= 2
+            self.free = 2 * opened
         return None
 
     def improve(self, x: Floats, deadline: float, target: float) -> Floats:
