@@ -1,0 +1,136 @@
+"""The search keeps its promises on programs small enough to try every solution."""
+
+import numpy as np
+import pytest
+from unit.placement.programs import goals, program, solutions
+
+from placer.placement.goals import Cost
+from placer.placement.matrix import Builder, Floats, Program, RowKey
+from placer.placement.search import Found, search
+from placer.placement.watch import Watch
+from placer.plan import Goal, Stopped
+
+SECONDS = 20.0
+CLOSE = 1e-6
+
+
+def optima(seed: int, found: Found) -> list[float]:
+    """Return the least cost of each goal within what was reached for those before."""
+    possible, best = solutions(program(seed)), []
+    for cost, goal in zip(goals(seed), found.goals, strict=True):
+        best.append(float((possible @ cost.vector).min()))
+        reached = cost.sign * goal.reached
+        allowed = reached + cost.given_up * abs(reached) + CLOSE
+        possible = possible[possible @ cost.vector <= allowed]
+    return best
+
+
+def minimised(seed: int, found: Found) -> list[tuple[float, float]]:
+    """Return reached and bound of each goal as costs."""
+    return [
+        (cost.sign * goal.reached, cost.sign * goal.bound)
+        for cost, goal in zip(goals(seed), found.goals, strict=True)
+    ]
+
+
+TRIALS = [(seed, 0.0) for seed in range(300)] + [(seed, 0.3) for seed in range(60)]
+
+
+@pytest.mark.parametrize(("seed", "near_enough"), TRIALS)
+def test_bounds_are_never_above_what_can_be_reached(
+    seed: int, near_enough: float
+) -> None:
+    """Nor is anything reached that no solution has; exact search reaches the best."""
+    found = search(program(seed), goals(seed), SECONDS, near_enough=near_enough)
+    if found.x is None:
+        assert not len(solutions(program(seed)))
+        assert found.impossible
+        return
+    assert program(seed).holds(found.x)
+    pairs = zip(minimised(seed, found), optima(seed, found), strict=True)
+    for (reached, bound), best in pairs:
+        assert bound <= best + CLOSE
+        assert reached >= best - CLOSE
+        assert reached - bound <= near_enough * abs(reached) + CLOSE
+
+
+@pytest.mark.parametrize("seed", range(40))
+def test_the_solution_keeps_what_each_goal_reached(seed: int) -> None:
+    found = search(program(seed), goals(seed), SECONDS, near_enough=0)
+    if found.x is None:
+        return
+    for cost, goal in zip(goals(seed), found.goals, strict=True):
+        reached = cost.sign * goal.reached
+        allowed = reached + cost.given_up * abs(reached) + CLOSE
+        assert cost.vector @ found.x <= allowed
+    assert found.program.holds(found.x)
+
+
+def knapsack() -> tuple[Program, Cost, Floats]:
+    """Return a room of 5 for sizes 3, 4, 2 with gains 3, 5, 1, and a poor start.
+
+    The best is 4 alone, or 3 and 2: 5; the relaxation fills the rest with a third of 3.
+    """
+    builder = Builder(3, 3)
+    builder.at_most(RowKey("room"), [0, 1, 2], np.array([3.0, 4.0, 2.0]), 5)
+    gain = Cost("relief", "ms/s", -np.array([3.0, 5.0, 1.0]), -1)
+    return builder.build(), gain, np.array([1.0, 0.0, 0.0])
+
+
+def test_when_halted_the_start_is_kept() -> None:
+    rows, gain, start = knapsack()
+    found = search(rows, (gain,), SECONDS, start, Watch(halted=lambda: True))
+    assert found.x is not None
+    assert list(found.x) == list(start)
+    goal = found.goals[0]
+    assert goal.value == 3
+    assert goal.bound == pytest.approx(6)
+    assert goal.stopped is Stopped.INTERRUPT
+
+
+def test_when_not_halted_it_is_improved() -> None:
+    rows, gain, start = knapsack()
+    goal = search(rows, (gain,), SECONDS, start, near_enough=0).goals[0]
+    assert goal.value == 5
+    assert goal.bound == pytest.approx(5)
+    assert goal.stopped is Stopped.DONE
+
+
+def test_a_start_that_breaks_a_row_is_not_used() -> None:
+    rows, gain, _ = knapsack()
+    found = search(rows, (gain,), SECONDS, np.ones(3), Watch(halted=lambda: True))
+    assert found.x is not None
+    assert rows.holds(found.x)
+
+
+def test_each_goal_is_told_once_in_its_order() -> None:
+    told: list[Goal] = []
+    seed = next(s for s in range(20) if len(solutions(program(s))))
+    found = search(program(seed), goals(seed), SECONDS, watch=Watch(tell=told.append))
+    assert [goal.name for goal in told] == ["money", "relief", "effort"]
+    assert [goal.reached for goal in told] == [goal.reached for goal in found.goals]
+
+
+def test_nothing_is_told_of_the_impossible() -> None:
+    builder = Builder(2, 2)
+    builder.equal(RowKey("one"), [0, 1], np.ones(2), 3)
+    cost = Cost("effort", "GiB", np.ones(2))
+    found = search(builder.build(), (cost, cost), SECONDS)
+    assert (found.x, found.goals, found.impossible) == (None, (), True)
+
+
+def test_what_only_fractions_could_keep_is_impossible() -> None:
+    """The relaxation has a solution; no choice has."""
+    builder = Builder(2, 2)
+    builder.equal(RowKey("one"), [0, 1], np.array([2.0, 2.0]), 3)
+    cost = Cost("effort", "GiB", np.ones(2))
+    found = search(builder.build(), (cost,), SECONDS)
+    assert (found.x, found.impossible) == (None, True)
+
+
+def test_a_goal_that_nothing_changes_is_reached_at_once() -> None:
+    rows, gain, start = knapsack()
+    idle = Cost("money", "hundredths", np.zeros(3))
+    found = search(rows, (idle, gain), SECONDS, start, near_enough=0)
+    assert [goal.value for goal in found.goals] == [0, 5]
+    assert str(found.goals[0].value) == "0.0", "never minus nought"
