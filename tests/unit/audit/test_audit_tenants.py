@@ -227,3 +227,21 @@ def test_wear_counts_what_the_cap_lets_be_written() -> None:
     case = Case(fleet, plan())
     wear = next(readings(Scene(case, case.today, case.homes, {}), "pool-wear"))
     assert wear.use * TB == Fraction(425_000 * SECONDS_PER_DAY * 1_000)
+
+
+def test_a_rate_cap_counts_what_is_read_and_written() -> None:
+    """3 + 1 MB/s of 2: half.  At 21:00 400 kB/s: all."""
+    tenant = Tenant(name="t", rate_cap=2 * MB)
+    today = demand_at(estate(LARGE, SMALL, tenant=tenant), 0)
+    assert requests(today, "a/large") == [150, 30]
+
+
+def test_snapshots_are_not_copied_so_they_wear_nothing() -> None:
+    """A move of 1 GiB writes 1 GiB, whatever stands beside it."""
+    kept = volume("large", load(1, 0), load(1, 0), snapshots=9 * GIB)
+    worn = replace(FLASH, name="two", dwpd=1, life_days=1_000, array_overhead=1_000_000)
+    fleet = replace(estate(kept), pools=(FLASH, worn))
+    case = Case(fleet, plan("a/two"))
+    scene = Scene(case, case.today, case.targets, {})
+    (wear,) = readings(scene, "pool-wear")
+    assert wear.use * TB == GIB
