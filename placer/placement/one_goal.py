@@ -14,7 +14,7 @@ from placer.placement.watch import Watch
 
 PROVEN = 1e-6
 ROUNDING = 1e-9
-CHAIN_SHARE = 0.4
+CHAIN_SHARE = 0.3
 
 
 @dataclass(frozen=True)
@@ -55,7 +55,7 @@ class OneGoal:
         better = self._joined(replace(best, x=first), best)
         if better.x is None:
             return better
-        target = best.bound + self._effort.near_enough / 2 * abs(best.bound)
+        target = best.bound + self._effort.near_enough * abs(best.bound)
         return replace(better, x=chain.improve(better.x, deadline, target))
 
     def _whole(self) -> solver.Answer:

@@ -16,6 +16,7 @@ from placer.estate import (
     Pool,
     Rule,
     RuleKind,
+    Tenant,
     Volume,
     Window,
 )
@@ -43,6 +44,7 @@ def estate(seed: int) -> Estate:
         pools=pools,
         arrays=(_array(luck, "old"), _array(luck, "new")),
         rules=_rules(luck, volumes, pools),
+        tenants=(_tenant(luck),),
         windows=(_window(),),
         policy=_policy(luck),
     )
@@ -66,6 +68,10 @@ def _volume(luck: random.Random, number: int, pools: tuple[Pool, ...]) -> Volume
         capacity_growth=luck.choice([0, 200_000]),
         load_growth=luck.choice([0, 100_000]),
         stays=luck.random() < 0.05,
+        tenant=luck.choice(["", "", "t"]),
+        random_reads=luck.choice([1_000_000, 250_000]),
+        read_hits=luck.choice([0, 0, 400_000]),
+        snapshots=luck.choice([0, 0, 30 * GIB]),
     )
 
 
@@ -109,6 +115,7 @@ def _spinning(luck: random.Random, array: str, name: str) -> Pool:
         thin_at_most=luck.choice([0, 0, 1_000_000]),
         rpm=luck.choice([7200, 10_000]),
         seek=luck.choice([4500, 8500]),
+        measured_factor=luck.choice([1_000_000, 1_000_000, 1_300_000]),
         drive_rate=150 * 10**6,
     )
 
@@ -120,6 +127,8 @@ def _array(luck: random.Random, name: str) -> Array:
         reads_at_most=luck.choice([0, 3_000_000]),
         writes_at_most=luck.choice([0, 2_000_000]),
         write_answer=500,
+        read_hit_answer=200,
+        cache=luck.choice([0, 64, 128]) * GIB,
         volumes_at_most=luck.choice([0, 0, 3]),
         hosts_at_most=luck.choice([0, 0, 2]),
         largest_volume=luck.choice([0, 0, 300 * GIB]),
@@ -138,6 +147,15 @@ def _rules(
         Rule(kind=RuleKind.ONLY_ON, volumes=pair[:1], pools=(pool,)),
     )
     return tuple(rule for rule in rules if luck.random() < 0.15)
+
+
+def _tenant(luck: random.Random) -> Tenant:
+    return Tenant(
+        name="t",
+        requests_cap=luck.choice([0, 300_000, 900_000]),
+        rate_cap=luck.choice([0, 4_000_000]),
+        plan_for_cap=luck.random() < 0.3,
+    )
 
 
 def _window() -> Window:
