@@ -51,6 +51,8 @@ def title(goal: Goal) -> str:
 
 def value(goal: Goal, currency: str = "") -> str:
     """Return a goal's value with its unit; money in whole units of the currency."""
+    if goal.name == "missed" and goal.value == 0:
+        return "none"
     if goal.name == "money":
         return f"{goal.value / CENTS:,.2f} {currency}".rstrip()
     return f"{_figure(goal.value)} {_UNITS.get(goal.unit, goal.unit)}".rstrip()
@@ -104,7 +106,7 @@ def status(plan: Plan) -> str:
         return "Nothing has to move."
     words = count(len(plan.moves), "move")
     if plan.left:
-        words += f", and {count(len(plan.left), 'move')} left over"
+        words += f" and {len(plan.left)} left over"
     if plan.status is Status.PROVEN:
-        return f"Proven best plan: {words}."
-    return f"Best plan found, how near the best is told by goal: {words}."
+        return f"{words}: proven best."
+    return f"{words}: the best found; how near the best possible is told by goal."

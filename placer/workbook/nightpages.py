@@ -41,8 +41,8 @@ _STEP: Sequence[Heading] = (
 _CONTROL: Sequence[Heading] = (
     ("array", TEXT),
     ("total", TEXT),
-    ("by its owner", REAL),
-    ("in the inventory", REAL),
+    ("owner", REAL),
+    ("inventory", REAL),
 )
 _HAND_WRITTEN = {11: 10, 12: 18}
 _SIGNED = "Change no. ________   Approved by ____________   Operator ____________"

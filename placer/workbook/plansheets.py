@@ -125,11 +125,11 @@ GOALS = Table(
     (
         Column("goal", TEXT, "name"),
         Column("in this plan", REAL, "value"),
+        Column("unit", TEXT, "unit"),
+        Column("in words", TEXT, show=lambda goal, scope: told(goal, scope.currency)),
         Column("best found", REAL, "reached"),
         Column("no plan is better than", REAL, "bound"),
-        Column("unit", TEXT, "unit"),
         Column("search ended", choice(Stopped), "stopped"),
-        Column("in words", TEXT, show=lambda goal, scope: told(goal, scope.currency)),
     ),
 )
 BOUGHT = Table(

@@ -52,15 +52,16 @@ def test_money_is_told_in_the_currency() -> None:
 
 def test_figures_have_as_many_digits_as_anybody_reads() -> None:
     assert value(goal(2, 2)) == "2 steps of 10 %"
+    assert value(goal(0, 0)) == "none"
     assert value(goal(12.34567, 0)) == "12.35 steps of 10 %"
     assert value(goal(16461.63061, 0)) == "16,462 steps of 10 %"
 
 
 def test_the_status_says_what_to_make_of_the_plan() -> None:
     assert status(NO_PLAN).startswith("No plan is possible: 1 shortage listed")
-    assert status(PLAN).endswith("told by goal: 2 moves, and 1 move left over.")
+    assert status(PLAN).startswith("2 moves and 1 left over: the best found;")
     proven = replace(PLAN, left=(), status=Status.PROVEN)
-    assert status(proven) == "Proven best plan: 2 moves."
+    assert status(proven) == "2 moves: proven best."
     nothing = replace(PLAN, moves=(), left=(), status=Status.PROVEN)
     assert status(nothing) == "Nothing has to move."
 
