@@ -92,7 +92,7 @@ def amounts(total: Total) -> str:
 
 
 def _pools(estate: Estate, plan: Plan, width: int) -> list[str]:
-    """Return the use of each pool's limits today, and planned or as near as it gets."""
+    """Return the use of pools and controllers today, and planned or nearest."""
     if not plan.uses:
         return []
     then = Moment.NEAREST if plan.status is Status.NO_PLAN else Moment.PLANNED
@@ -101,6 +101,11 @@ def _pools(estate: Estate, plan: Plan, width: int) -> list[str]:
     rows = [
         (pool.id, *(_change(pool.id, limit, then, uses) for _, limit in _LIMITS))
         for pool in estate.pools
+    ]
+    rows += [
+        (f"{array.name} controllers", "-", busy, "-")
+        for array in estate.arrays
+        if (busy := _change(array.name, "controller-busy", then, uses)) != "-"
     ]
     return [*table([head, *rows], width), *paragraph(_THEN[then](estate), width)]
 

@@ -10,6 +10,7 @@ _ADVICE = (
     "Fill in volumes and pools first, one row each. Every other sheet can stay empty.",
     "The note on a heading says what a blank cell means; every default used is listed.",
     "Keep the headings and their units. Columns may be moved or left out.",
+    "Leave out rows of totals: they belong into the sheet control, which checks them.",
     "Write shares with a percent sign (25 %), or as a number above 1.",
     "Write a reduction as 2 or 2:1, a date as 2026-03-02, a time as 22:00.",
     "Array and volume together are the key: write names the same everywhere.",
@@ -41,6 +42,9 @@ _EXAMPLES: dict[str, dict[str, str]] = {
         "opens at": "22:00",
         "closes at": "06:00",
     },
+    "tenants": {"tenant": "T1", "requests cap": "5000", "plan for": "measured"},
+    "hosts": {"host": "h1", "arrays reached": "K; L", "cluster": "C1"},
+    "rules": {"what": "role log", "rule": "only on", "where": "media flash"},
 }
 
 

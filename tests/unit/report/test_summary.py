@@ -55,6 +55,17 @@ def test_pools_show_each_limit_today_and_planned() -> None:
     assert "40 -> 75 (Tue 14)" in line
 
 
+def test_controllers_stand_under_the_pools_where_they_are_rated() -> None:
+    busy = [
+        replace(use("controller-busy", moment, share, "16:00"), where="quay")
+        for moment, share in ((Moment.TODAY, 0.54), (Moment.PLANNED, 0.66))
+    ]
+    text = plan_text(ESTATE, replace(PLAN, uses=tuple(busy)))
+    line = next(part for part in text.splitlines() if part.startswith("quay contr"))
+    assert "54 -> 66 (16:00)" in line
+    assert "quay controllers" not in plan_text(ESTATE, PLAN)
+
+
 def test_without_a_plan_the_pools_show_how_near_it_gets() -> None:
     uses = (
         use("pool-room", Moment.TODAY, 0.5),
