@@ -2,10 +2,11 @@
 
 import numpy as np
 
-from placer.candidates.block import Block, Ints
+from placer.candidates.block import Ints
 from placer.candidates.table import Candidates
+from placer.candidates.uses import uses
 from placer.estate import Estate, Level, Rule, RuleKind
-from placer.plan import Reason
+from placer.plan import Moment, Reason
 
 
 def reasons(candidates: Candidates, places: Ints) -> list[Reason]:
@@ -34,21 +35,20 @@ def _reason(
 
 
 def _strained(candidates: Candidates) -> set[int]:
-    """Return pools over a limit, today or at the horizon, if nothing moves."""
-    found: set[int] = set()
-    for block in (*candidates.limits, *candidates.limits_today):
-        over = over_limit(block, candidates.home)
-        found |= {p for p, o in enumerate(block.owner_of) if o >= 0 and over[o]}
-    return found
+    """Return pools over a limit of theirs or their array's, if nothing moves.
 
-
-def over_limit(
-    block: Block, places: Ints
-) -> np.ndarray[tuple[int], np.dtype[np.bool_]]:
-    """Return which owners a placement takes over their limit, nothing bought."""
-    worst = block.use(places).max(axis=1)
-    result: np.ndarray[tuple[int], np.dtype[np.bool_]] = worst > block.limits[:, 0]
-    return result
+    Today and at the horizon count.
+    """
+    nothing = np.zeros(len(candidates.pools), dtype=np.int64)
+    over = {
+        use.where
+        for blocks in (candidates.limits_today, candidates.limits)
+        for use in uses(candidates, blocks, candidates.home, nothing, Moment.TODAY)
+        if use.use > use.at_most
+    }
+    return {
+        p for p, pool in enumerate(candidates.pools) if over & {pool.id, pool.array}
+    }
 
 
 def _broken(estate: Estate) -> set[str]:
