@@ -10,13 +10,14 @@ from dataclasses import dataclass
 import numpy as np
 
 from placer.candidates.block import Block, Floats, Ints
-from placer.candidates.limits import Date
 from placer.candidates.table import Candidates
+from placer.candidates.uses import limit_of
 from placer.placement import nights, rows, solver
 from placer.placement.layout import Layout
 from placer.placement.matrix import Program, RowKey
 from placer.plan import Shortage
 from placer.units import GIB, PPM
+from placer.words import count
 
 SMALLEST = 1e-5
 REMEDIES = {
@@ -106,8 +107,10 @@ def nearest(layout: Layout, seconds: float) -> Nearest | None:
 
 
 def _may_overrun(program: Program, row: int, key: RowKey) -> bool:
-    """Markers (sides of 0) and rules stay hard; limits with a side may be overrun."""
-    return key.code in REMEDIES and bool(program.high[row] > 0 or key.hour >= 0)
+    """Rules stay hard, and rows that set a marker: only those take one off."""
+    start, end = program.matrix.indptr[row : row + 2]
+    sets_marker = key.hour < 0 and bool((program.matrix.data[start:end] < 0).any())
+    return key.code in REMEDIES and not sets_marker
 
 
 def shortages(layout: Layout, found: Nearest) -> tuple[Shortage, ...]:
@@ -124,7 +127,7 @@ class Words:
     """Puts the overruns of one placement into trade units."""
 
     def __init__(self, layout: Layout, places: Ints, bought: Ints) -> None:
-        self._candidates = layout.candidates
+        self._layout, self._candidates = layout, layout.candidates
         self._places, self._bought = places, bought
         self._blocks = {block.code: block for block in self._candidates.limits}
 
@@ -132,10 +135,11 @@ class Words:
         """Return the shortage of one limit."""
         block = self._blocks.get(code)
         if block is None:
-            return self._of_nights(code, owner)
+            hosts = code == "array-hosts"
+            return self._of_hosts(owner) if hosts else self._of_nights(code, owner)
         at = block.owners.index(owner)
         use = float(block.use(self._places)[at, hour])
-        limit = self._limit(block, at)
+        limit = limit_of(block, at, self._bought)
         amount, unit = self._amount(block, at, hour, use, limit)
         label = self._candidates.estate.hours[hour].label if block.hourly else ""
         when = f" at {label}" if label else ""
@@ -148,14 +152,6 @@ class Words:
             sentence=f"{owner}: {amount:,.6g} {unit} short{when}",
             remedy=REMEDIES[code],
         )
-
-    def _limit(self, block: Block, owner: int) -> float:
-        """Return the limit with what is bought in the owner's own pool."""
-        steps = [
-            int(self._bought[p]) for p, o in enumerate(block.owner_of) if o == owner
-        ]
-        one_pool = len(steps) == 1
-        return float(block.limits[owner, steps[0] if one_pool else 0])
 
     def _amount(
         self, block: Block, owner: int, hour: int, use: float, limit: float
@@ -192,25 +188,29 @@ class Words:
         )
 
     def _missing_in_nights(self, code: str, owner: str) -> tuple[float, str]:
-        moving = [int(v) for v in np.flatnonzero(self._places != self._home)]
-        for known, who, moved, most in nights.capacities(self._candidates):
+        candidates = self._candidates
+        moving = np.flatnonzero(self._places != candidates.home)
+        for known, who, moved, most in nights.capacities(candidates):
             if (known, who) == (code, owner):
-                total = sum(moved(v, int(self._places[v])) for v in moving)
+                total = sum(moved(int(v), int(self._places[v])) for v in moving)
                 return (total - most) / GIB, "GiB"
-        if code == "array-hosts":
-            return self._hosts(owner), "hosts"
-        most = nights.cutovers(self._candidates.estate) or 0
-        return max(1.0, len(moving) - most), "cutovers"
+        groups = sum(not set(moving).isdisjoint(g) for g in self._layout.groups)
+        return groups - (nights.cutovers(candidates.estate) or 0), "cutovers"
 
-    @property
-    def _home(self) -> Ints:
-        return Date(self._candidates.estate, 0).home
-
-    def _hosts(self, owner: str) -> float:
+    def _of_hosts(self, owner: str) -> Shortage:
+        candidates = self._candidates
+        array = candidates.reach.arrays[owner]
         here = {
             volume.host
-            for volume, pool in zip(self._candidates.volumes, self._places, strict=True)
-            if self._candidates.pools[pool].array == owner and volume.host
+            for volume, pool in zip(candidates.volumes, self._places, strict=True)
+            if candidates.pools[pool].array == owner and volume.host
         }
-        arrays = {array.name: array for array in self._candidates.estate.arrays}
-        return float(len(here) - arrays[owner].hosts_at_most)
+        missing = len(here) - array.hosts_at_most
+        return Shortage(
+            limit="array-hosts",
+            where=owner,
+            amount=missing,
+            unit="hosts",
+            sentence=f"{owner}: {count(missing, 'host')} short",
+            remedy=REMEDIES["array-hosts"],
+        )
