@@ -12,11 +12,12 @@ import numpy as np
 from placer.candidates.block import Block, Floats, Ints
 from placer.candidates.table import Candidates
 from placer.candidates.uses import limit_of
+from placer.physics.drives import busy_drives
 from placer.placement import nights, rows, solver
 from placer.placement.layout import Layout
 from placer.placement.matrix import Program, RowKey
 from placer.plan import Shortage
-from placer.units import GIB, PPM
+from placer.units import GIB
 from placer.words import count
 
 SMALLEST = 1e-5
@@ -170,10 +171,9 @@ class Words:
         there = block.owner_of[self._places] == owner
         return float(block.asks[there, hour, :2].sum())
 
-    def _drives(self, block: Block, owner: int) -> float:
+    def _drives(self, block: Block, owner: int) -> int:
         pool = int(np.flatnonzero(block.owner_of == owner)[0])
-        ceiling = self._candidates.pools[pool].busy_ceiling / PPM
-        return float(block.limits[owner, int(self._bought[pool])]) / ceiling
+        return busy_drives(self._candidates.pools[pool], int(self._bought[pool]))
 
     def _of_nights(self, code: str, owner: str) -> Shortage:
         amount, unit = self._missing_in_nights(code, owner)

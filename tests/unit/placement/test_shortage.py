@@ -77,6 +77,13 @@ def test_busy_drives_in_percent_at_the_hour_that_lacks_most() -> None:
     assert lack(whole) == ("pool-busy", "depot/slow", 20, "busy-percent", "01:00")
 
 
+def test_drives_that_must_not_be_busy_at_all() -> None:
+    """Half a drive of one, where nothing is allowed."""
+    fast = replace(FAST, drives=1, reads_at_most=200 * MILLI, skew=PPM, busy_ceiling=0)
+    whole = alone(volume("a", "quay/fast", 1, load(100)), fast)
+    assert lack(whole) == ("pool-busy", "quay/fast", 50, "busy-percent", "00:00")
+
+
 def test_busy_pools_known_by_their_requests_only() -> None:
     """300 of 200 requests/s are 150 %, 80 % more than 70 %."""
     box = replace(FAST, requests_at_most=200 * MILLI)
