@@ -87,9 +87,9 @@ class Volume:
     """A volume, where it is today, and what is asked of it.
 
     ``load`` has one entry per hour of the estate.  ``response_limit`` 0 means none.
-    ``random_reads`` and ``read_hits`` are shares of the reads [ppm]; ``large_share`` [ppm]
-    of all requests has ``large_size`` [B]; ``snapshots`` [B] take room beside the volume
-    and are not copied with it.
+    ``random_reads`` and ``read_hits`` are shares of the reads [ppm]; ``large_share``
+    [ppm] of all requests has ``large_size`` [B]; ``snapshots`` [B] take room beside the
+    volume and are not copied with it.
     """
 
     array: str

@@ -101,16 +101,8 @@ def candidates(estate: Estate) -> Candidates:
 
 
 def _promised(estate: Estate, responses: worth.Responses) -> Ints:
-    table = np.array(
-        [
-            [
-                worth.promised(responses, v, p, pool)
-                for p, pool in enumerate(estate.pools)
-            ]
-            for v in range(len(estate.volumes))
-        ],
-        dtype=np.int64,
-    )
+    every = range(len(estate.volumes))
+    table = np.array([responses.promised(v) for v in every], dtype=np.int64)
     home = Date(estate, 0).home
     table[np.arange(len(home)), home] = responses.today
     return table

@@ -9,9 +9,11 @@ import numpy as np
 
 from placer.candidates.block import Block, Floats, Ints
 from placer.candidates.limits import Date, pool_busy
-from placer.estate import Estate, Policy, Pool, Volume
+from placer.candidates.mixes import Mixes
+from placer.estate import Estate, Policy, Volume
 from placer.physics import drives, queueing
 from placer.physics.demand import busiest_hour
+from placer.physics.queueing import Queue
 from placer.units import GIB, MILLI, PPM
 
 STEPS_AT_MOST = 10
@@ -43,11 +45,8 @@ class Responses:
         every = range(len(estate.volumes))
         self.requests = self._date.loads[every, self._peak, :2].sum(axis=1)
         no_steps = np.zeros(len(estate.pools), dtype=np.int64)
-        shares = self.shares(self._date.home, no_steps)
-        self.modelled_today = [
-            self.at(v, int(p), shares[p, self._peak[v]])
-            for v, p in enumerate(self._date.home)
-        ]
+        self._mixes = Mixes(self._date)
+        self.modelled_today = self._in(self._date.home, no_steps)
         self.today = [
             volume.response_measured or modelled
             for volume, modelled in zip(
@@ -55,8 +54,19 @@ class Responses:
             )
         ]
 
-    def at(self, volume: int, pool: int, busy: float) -> int:
-        """Return the mean response in the busiest hour at a busy share of the pool."""
+    def promised(self, volume: int) -> list[int]:
+        """Return the response in every pool at its busy ceiling.
+
+        The mix in the pool is today's and the volume.
+        """
+        residuals = self._mixes.joined(volume, self._peak[volume])
+        return [
+            self._at(volume, i, Queue(pool.busy_ceiling / PPM, float(residuals[i])))
+            for i, pool in enumerate(self._estate.pools)
+        ]
+
+    def _at(self, volume: int, pool: int, queue: Queue) -> int:
+        """Return the mean response in the busiest hour behind a queue of the pool."""
         record = self._estate.pools[pool]
         asked = self._estate.volumes[volume]
         load = asked.load[self._peak[volume]]
@@ -66,7 +76,7 @@ class Responses:
             hits=float(self._date.hits[volume, pool]),
         )
         array = self._arrays[record.array]
-        return whole_microseconds(queueing.response(load, reads, record, array, busy))
+        return whole_microseconds(queueing.response(load, reads, record, array, queue))
 
     def shares(self, places: Ints, steps: Ints) -> Floats:
         """Return the busy share of every pool and hour, (pools, hours)."""
@@ -81,22 +91,22 @@ class Responses:
 
     def planned(self, places: Ints, steps: Ints) -> list[int]:
         """Return the response of each volume in a placement, as reported."""
-        shares = self.shares(places, steps)
+        stays = places == self._date.home
+        modelled = self._in(places, steps)
         return [
-            self._planned_one(v, int(p), shares[p, self._peak[v]])
-            for v, p in enumerate(places)
+            volume.response_measured if stays[v] and volume.response_measured else then
+            for v, (volume, then) in enumerate(
+                zip(self._estate.volumes, modelled, strict=True)
+            )
         ]
 
-    def _planned_one(self, volume: int, pool: int, busy: float) -> int:
-        measured = self._estate.volumes[volume].response_measured
-        if measured and pool == self._date.home[volume]:
-            return measured
-        return self.at(volume, pool, busy)
-
-
-def promised(responses: Responses, volume: int, pool: int, record: Pool) -> int:
-    """Return the response a move promises: with the new pool at its busy ceiling."""
-    return responses.at(volume, pool, record.busy_ceiling / PPM)
+    def _in(self, places: Ints, steps: Ints) -> list[int]:
+        """Return the modelled response of each volume in a placement."""
+        shares, residuals = self.shares(places, steps), self._mixes.residuals(places)
+        return [
+            self._at(v, int(p), Queue(float(shares[p, h]), float(residuals[p, h])))
+            for v, (p, h) in enumerate(zip(places, self._peak, strict=True))
+        ]
 
 
 def steps_missed(volume: Volume, response: int, policy: Policy) -> int:

@@ -10,26 +10,24 @@ from dataclasses import dataclass
 
 from placer.estate import Array, Load, Media, Pool
 from placer.physics import drives
-from placer.units import MILLI, PPM
+from placer.units import PPM
 
 MOST_BUSY = 0.95
 
 
-def wait(busy: float, service: float, variation: float = 0.0) -> float:
-    """Return the mean wait before service: U S (1 + c^2) / (2 (1 - U)) [1]_.
+def wait(busy: float, residual: float) -> float:
+    """Return the mean wait before service: U / (1 - U) x residual [1]_.
 
     Parameters
     ----------
     busy
         [1] share of time the server is busy, taken as at most 0.95.
-    service
-        [any time] mean service time; the wait has its unit.
-    variation
-        [1] squared coefficient of variation of service times; with 0 (fixed times)
-        the result is a lower bound.
+    residual
+        [any time] mean rest of the request in service, E[s^2] / (2 E[s]); the wait has
+        its unit.
     """
     share = min(busy, MOST_BUSY)
-    return share * service * (1 + variation) / (2 * (1 - share))
+    return share / (1 - share) * residual
 
 
 def knows_response(pool: Pool) -> bool:
@@ -50,17 +48,23 @@ class Reads:
     hits: float = 0.0
 
 
-def read_time(pool: Pool, reads: Reads, busy: float) -> float:
+@dataclass(frozen=True, slots=True)
+class Queue:
+    """What a request meets at a drive: busy share, rest of the one in service [s]."""
+
+    busy: float
+    residual: float
+
+
+def read_time(pool: Pool, reads: Reads, queue: Queue) -> float:
     """Return the mean time of one read at the drives [s]."""
-    moved = drives.transfer(reads.size, pool)
+    moved = drives.transfer(reads.size, pool) + wait(queue.busy, queue.residual)
     if pool.media is Media.FLASH:
-        held = moved + (MILLI / pool.reads_at_most if pool.reads_at_most else 0.0)
-        return pool.read_time / drives.MICRO + moved + wait(busy, held)
-    whole = drives.positioning(pool) * _positionings(pool, reads) + moved
-    return whole + wait(busy, whole)
+        return pool.read_time / drives.MICRO + moved
+    return drives.positioning(pool) * _positionings(pool, reads) + moved
 
 
-def response(load: Load, reads: Reads, pool: Pool, array: Array, busy: float) -> float:
+def response(load: Load, reads: Reads, pool: Pool, array: Array, queue: Queue) -> float:
     """Return the mean response of a load [us], 0 where it is not known or none.
 
     Writes are answered from the array's protected cache; reads by its cache where they
@@ -70,7 +74,7 @@ def response(load: Load, reads: Reads, pool: Pool, array: Array, busy: float) ->
     if not requests or not knows_response(pool):
         return 0.0
     factor = drives.MICRO * pool.measured_factor / PPM
-    missed = read_time(pool, reads, busy) * factor
+    missed = read_time(pool, reads, queue) * factor
     read = reads.hits * array.read_hit_answer + (1 - reads.hits) * missed
     return (load.reads * read + load.writes * array.write_answer) / requests
 

@@ -15,13 +15,18 @@ def mixed(streams: Sequence[tuple[float, float]]) -> tuple[float, float, float]:
     return rate * mean / 1_000, mean, square / mean**2 - 1
 
 
+def queued(busy: float, service: float, variation: float = 0.0) -> float:
+    """Wait behind the residual E[s^2] / (2 E[s]) = S (1 + c^2) / 2."""
+    return wait(busy, service * (1 + variation) / 2)
+
+
 @pytest.mark.parametrize(
     ("busy", "expected"),
     [(0.5, 1.5), (0.7, 2.1667), (0.8, 3), (0.9, 5.5), (0.95, 10.5)],
 )
 def test_response_over_service_with_fixed_times(busy: float, expected: float) -> None:
     """M/D/1, R/S = 1 + U / (2 (1 - U)): Pollaczek-Khinchine without variation."""
-    assert 1 + wait(busy, 1.0) == pytest.approx(expected, abs=5e-5)
+    assert 1 + queued(busy, 1.0) == pytest.approx(expected, abs=5e-5)
 
 
 @pytest.mark.parametrize(
@@ -35,7 +40,7 @@ def test_wait_with_exponential_times(
     Hennessy, Patterson, "Computer Architecture", I/O queueing examples (from memory);
     100 requests/s of 4 ms wait 2.667 ms (a storage course's exercise).
     """
-    assert wait(busy, service, 1.0) == pytest.approx(expected, abs=5e-4)
+    assert queued(busy, service, 1.0) == pytest.approx(expected, abs=5e-4)
 
 
 @pytest.mark.parametrize(
@@ -54,13 +59,13 @@ def test_wait_behind_requests_of_mixed_sizes(
     1981, p. 189.  Small requests behind a few large ones wait 54 times longer [ms].
     """
     busy, service, variation = mixed(streams)
-    assert wait(busy, service, variation) == pytest.approx(expected, abs=5e-5)
+    assert queued(busy, service, variation) == pytest.approx(expected, abs=5e-5)
 
 
 def test_fixed_times_wait_least() -> None:
     """Pollaczek-Khinchine: any variation adds, so the plan may say "at least"."""
-    assert wait(0.7, 1.0) < wait(0.7, 1.0, 0.1) < wait(0.7, 1.0, 1.0)
+    assert queued(0.7, 1.0) < queued(0.7, 1.0, 0.1) < queued(0.7, 1.0, 1.0)
 
 
 def test_an_overloaded_server_keeps_a_finite_wait() -> None:
-    assert wait(1.4, 1.0) == wait(MOST_BUSY, 1.0) == pytest.approx(9.5)
+    assert queued(1.4, 1.0) == queued(MOST_BUSY, 1.0) == pytest.approx(9.5)
