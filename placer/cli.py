@@ -4,11 +4,10 @@ Exit codes: 0 done and audited; 1 the inventory has errors; 2 wrong use; 3 no fe
 plan or moves left over; 4 stopped with nothing; 5 the audit refused the plan.
 """
 
-import json
 import signal
 import sys
 from collections.abc import Callable
-from dataclasses import asdict, dataclass
+from dataclasses import dataclass
 from datetime import date
 from enum import IntEnum
 from pathlib import Path
@@ -18,12 +17,13 @@ import click
 
 from placer import __version__, audit, planner
 from placer.candidates.table import Candidates, candidates
+from placer.candidates.today import compare
 from placer.estate import Estate
 from placer.findings import Finding, errors, in_order
 from placer.placement.watch import Watch
 from placer.plan import Goal, Plan, Status, Stopped
 from placer.report.check import check_text
-from placer.report.record import dump
+from placer.report.record import dump, dump_findings
 from placer.report.summary import plan_text
 from placer.report.verdict import verdict_text
 from placer.survey import survey
@@ -159,7 +159,7 @@ def audit_command(inventory: Path, plan_file: Path, *, as_json: bool) -> None:
         _tell(opened, as_json)
         sys.exit(Exit.BAD_INVENTORY)
     found = audit.judge(opened.estate, made)
-    click.echo(_as_json(found) if as_json else verdict_text(found, made.status))
+    click.echo(dump_findings(found) if as_json else verdict_text(found, made.status))
     sys.exit(Exit.REFUSED if found else Exit.DONE)
 
 
@@ -176,9 +176,11 @@ def _open(path: Path, start: str = "") -> Opened:
 def _tell(opened: Opened, as_json: bool) -> None:
     """Print what was read and what is wrong with it."""
     if as_json:
-        click.echo(_as_json(opened.findings))
+        click.echo(dump_findings(opened.findings))
     else:
-        click.echo(check_text(opened.estate, opened.findings, opened.totals))
+        compared = compare(opened.table) if opened.table else None
+        said = check_text(opened.estate, opened.findings, opened.totals, compared)
+        click.echo(said)
 
 
 def _write(
@@ -252,7 +254,3 @@ def _end(*_: object) -> None:
     """End the program at once, as asked by a second Ctrl-C."""
     click.echo("interrupted again: ended", err=True)
     sys.exit(Exit.NOTHING)
-
-
-def _as_json(findings: tuple[Finding, ...]) -> str:
-    return json.dumps([asdict(finding) for finding in findings], indent=2)
