@@ -10,6 +10,8 @@ Keys, in this order:
     sizes [B], rates [B/s], responses [µs], prices [hundredths of the currency].  The
     times ``starts``, ``ends``, ``cutover`` and ``released`` are ISO 8601 with the
     offset of the window's zone.  A number that is not finite is null.
+``units``
+    Of the fields whose unit does not stand beside them.
 ``totals``
     Sums of the inventory by array, the last one of all, as in ``placer.tally.Total``.
 ``assumptions``
@@ -31,6 +33,17 @@ from placer.tally import totals
 from placer.windows.clock import local
 
 _TIMES = ("starts", "ends", "cutover", "released")
+_UNITS = {
+    "size": "B",
+    "provisioned": "B",
+    "occupied": "B",
+    "rate": "B/s",
+    "requests": "1/1000 s",
+    "response_today": "us",
+    "response_planned": "us",
+    "response_limit": "us",
+    "price": "1/100 of the currency",
+}
 
 
 def dump(plan: Plan, estate: Estate, findings: Iterable[Finding] = ()) -> str:
@@ -44,10 +57,16 @@ def dump(plan: Plan, estate: Estate, findings: Iterable[Finding] = ()) -> str:
             if isinstance(value, tuple)
             else value
         )
+    document["units"] = _UNITS
     document["totals"] = [asdict(total) for total in totals(estate)]
     document["assumptions"] = [asdict(a) for a in estate.assumptions]
-    document["findings"] = [_finding(f) for f in in_order(findings)]
+    document["findings"] = _findings(findings)
     return json.dumps(document, indent=2, allow_nan=False) + "\n"
+
+
+def dump_findings(findings: Iterable[Finding]) -> str:
+    """Return findings as JSON text, in the form they have in a plan's."""
+    return json.dumps(_findings(findings), indent=2)
 
 
 def _record(record: Any, zones: dict[str, str], zone: str) -> dict[str, Any]:
@@ -62,6 +81,10 @@ def _record(record: Any, zones: dict[str, str], zone: str) -> dict[str, Any]:
 
 def _plain(value: Any) -> Any:
     return None if isinstance(value, float) and not isfinite(value) else value
+
+
+def _findings(findings: Iterable[Finding]) -> list[dict[str, str]]:
+    return [_finding(finding) for finding in in_order(findings)]
 
 
 def _finding(finding: Finding) -> dict[str, str]:

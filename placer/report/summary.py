@@ -206,7 +206,7 @@ def _trust(estate: Estate, findings: Iterable[Finding], width: int) -> list[str]
     """Return how much was assumed and remarked."""
     cells = sum(a.cells for a in estate.assumptions)
     assumed = f"Assumed: {count(len(estate.assumptions), 'default')} in "
-    assumed += f"{count(cells, 'empty cell')}"
+    assumed += f"{count(cells, 'empty cell')}, see the sheet assumptions"
     return [
         *paragraph(assumed, width),
         *paragraph(f"Findings: {counted(findings)}", width),
