@@ -107,5 +107,5 @@ def test_responses_and_relief() -> None:
 def test_wear() -> None:
     """142.089 TB of hosts and 0.288 TB of the move, of 42,048 TB."""
     wear = used(1)["k/f", "pool-wear"]
-    assert wear.use == pytest.approx(142.089 + 0.288, abs=5e-4)
+    assert wear.use == pytest.approx(142.0886 + 0.2878, abs=1e-4)
     assert wear.at_most == pytest.approx(42_048)
