@@ -10,8 +10,8 @@ import numpy as np
 
 from placer.candidates.table import Candidates
 from placer.candidates.today import Compared, compare
-from placer.candidates.uses import over, uses
-from placer.estate import Rule, RuleKind, Volume
+from placer.candidates.uses import uses
+from placer.estate import Level, Rule, RuleKind, Volume
 from placer.findings import Finding, Place, Severity
 from placer.physics import controllers, drives
 from placer.plan import Moment
@@ -95,7 +95,7 @@ def _contradict(first: Rule, second: Rule, shared: set[str]) -> bool:
         return False
     kinds = {first.kind, second.kind}
     if kinds == {RuleKind.APART, RuleKind.TOGETHER}:
-        return len(shared) > 1 and first.level is second.level
+        return len(shared) > 1 and _cannot_part(first, second)
     pools, others = set(first.pools), set(second.pools)
     if kinds == {RuleKind.ONLY_ON}:
         return not pools & others
@@ -105,6 +105,18 @@ def _contradict(first: Rule, second: Rule, shared: set[str]) -> bool:
         )
         return only <= never
     return False
+
+
+def _cannot_part(first: Rule, second: Rule) -> bool:
+    """Return whether what is together in one rule is too near for the other.
+
+    What shares a pool shares its array, and what shares an array its site.
+    """
+    apart, together = (
+        (first, second) if first.kind is RuleKind.APART else (second, first)
+    )
+    levels = list(Level)
+    return levels.index(together.level) <= levels.index(apart.level)
 
 
 def _contradiction(place: Place, said: str, other: Place, also: str) -> Finding:
@@ -120,22 +132,18 @@ def _contradiction(place: Place, said: str, other: Place, also: str) -> Finding:
 def over_today(candidates: Candidates) -> Iterator[Finding]:
     """Say which limits are broken today: their use may not rise, and must be cured."""
     nothing = np.zeros(len(candidates.pools), dtype=np.int64)
-    for block in candidates.limits_today:
-        owners = {block.owners[o] for o in over(block, candidates.home, nothing)}
-        if not owners:
-            continue
-        today = uses(candidates, [block], candidates.home, nothing, Moment.TODAY)
-        for use in today:
-            if use.where in owners and use.limit == block.code:
-                when = f" at {use.hour}" if use.hour else ""
-                yield Finding(
-                    "over-limit-today",
-                    Severity.WARNING,
-                    _place(candidates, use.where),
-                    f"{use.where} is over its limit {use.limit} today: "
-                    f"{use.use:,.4g} of {use.at_most:,.4g} {use.unit}{when}",
-                    "the plan never lets it rise, and brings it under the limit",
-                )
+    blocks = candidates.limits_today
+    for use in uses(candidates, blocks, candidates.home, nothing, Moment.TODAY):
+        if use.use > use.at_most:
+            when = f" at {use.hour}" if use.hour else ""
+            yield Finding(
+                "over-limit-today",
+                Severity.WARNING,
+                _place(candidates, use.where),
+                f"{use.where} is over its limit {use.limit} today: "
+                f"{use.use:,.4g} of {use.at_most:,.4g} {use.unit}{when}",
+                "the plan never lets it rise, and brings it under the limit",
+            )
 
 
 def _place(candidates: Candidates, owner: str) -> Place:
