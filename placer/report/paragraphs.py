@@ -4,17 +4,22 @@ from collections.abc import Sequence
 from textwrap import wrap
 
 _GAP = "  "
+_GLUED = "\N{NO-BREAK SPACE}%"
 
 
 def paragraph(text: str, width: int, first: str = "", rest: str = "") -> list[str]:
-    """Return text in lines no longer than the width, a long word cut if it must be."""
-    return wrap(
-        text,
+    """Return text in lines no longer than the width, a long word cut if it must be.
+
+    No line begins with a percent sign that belongs to the number before it.
+    """
+    lines = wrap(
+        text.replace(" %", _GLUED),
         width,
         initial_indent=first,
         subsequent_indent=rest,
         break_on_hyphens=False,
     )
+    return [line.replace(_GLUED, " %") for line in lines]
 
 
 def table(rows: Sequence[Sequence[str]], width: int) -> list[str]:

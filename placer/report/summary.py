@@ -4,7 +4,7 @@ from collections import Counter
 from collections.abc import Callable, Iterable, Iterator, Sequence
 from itertools import islice
 
-from placer.estate import Estate
+from placer.estate import Array, Estate
 from placer.findings import Finding, Severity
 from placer.plan import Moment, Plan, Status, Use
 from placer.report.paragraphs import paragraph, table
@@ -103,11 +103,17 @@ def _pools(estate: Estate, plan: Plan, width: int) -> list[str]:
         for pool in estate.pools
     ]
     rows += [
-        (f"{array.name} controllers", "-", busy, "-")
+        (_controllers(array), "-", busy, "-")
         for array in estate.arrays
         if (busy := _change(array.name, "controller-busy", then, uses)) != "-"
     ]
     return [*table([head, *rows], width), *paragraph(_THEN[then](estate), width)]
+
+
+def _controllers(array: Array) -> str:
+    """Name the controllers of an array, and how many of them are counted as failed."""
+    failed = array.failures_survived
+    return f"{array.name} controllers" + (f", {failed} failed" if failed else "")
 
 
 def _change(where: str, limit: str, then: Moment, uses: Uses) -> str:

@@ -62,6 +62,7 @@ def test_controllers_stand_under_the_pools_where_they_are_rated() -> None:
     ]
     text = plan_text(ESTATE, replace(PLAN, uses=tuple(busy)))
     line = next(part for part in text.splitlines() if part.startswith("quay contr"))
+    assert line.startswith("quay controllers, 1 failed  ")
     assert "54 -> 66 (16:00)" in line
     assert "quay controllers" not in plan_text(ESTATE, PLAN)
 
