@@ -2,6 +2,7 @@
 
 from collections.abc import Sequence
 from dataclasses import dataclass
+from enum import Enum
 from fractions import Fraction
 from math import lcm
 
@@ -60,6 +61,27 @@ class Work:
         )
         write, written = self.writes
         return Form(reads, write, read_bytes, written, self.unit)
+
+
+class Kind(Enum):
+    """What hosts ask for, as far as drives tell it apart."""
+
+    RANDOM = "random read"
+    SEQUENTIAL = "sequential read"
+    WRITE = "write"
+
+
+@dataclass(frozen=True, slots=True)
+class Hold:
+    """How long a request of one kind occupies drives.
+
+    It does so ``times`` times: ``once`` [µs] and for every byte ``each_byte`` [µs].
+    """
+
+    kind: Kind
+    times: Fraction
+    once: Fraction
+    each_byte: Fraction
 
 
 def _whole(parts: Sequence[Fraction]) -> tuple[list[int], int]:
@@ -148,32 +170,44 @@ def busy_work(pool: Pool, whole: int) -> Work | None:
 
 
 def _parts(pool: Pool) -> list[Fraction]:
-    """Return the share of a random and a sequential read, a write, a byte of each."""
+    """Return the share of a request, then of a byte, of each kind."""
     if pool.requests_at_most:
         share = Fraction(1, pool.requests_at_most)
-        return [share, share, share, Fraction(0), Fraction(0), Fraction(0)]
-    parts = _flash(pool) if pool.media is Media.FLASH else _spinning(pool)
-    return [part * pool.skew / PPM for part in parts]
+        return [share] * len(Kind) + [Fraction(0)] * len(Kind)
+    requests, moved = (dict.fromkeys(Kind, Fraction(0)) for _ in range(2))
+    for hold in holds(pool):
+        requests[hold.kind] += hold.times * hold.once / (PPM * MILLI)
+        moved[hold.kind] += hold.times * hold.each_byte / PPM
+    return [part * pool.skew / PPM for part in (*requests.values(), *moved.values())]
 
 
-def _flash(pool: Pool) -> tuple[Fraction, ...]:
-    reads, writes = back_end(pool)
-    read, byte = per(1, pool.reads_at_most), per(1, pool.drive_rate)
-    write = per(reads, pool.reads_at_most) + per(writes, pool.writes_at_most)
-    return read, read, write, byte, byte, byte * (reads + writes)
+def holds(pool: Pool) -> tuple[Hold, ...]:
+    """Return how requests occupy the drives of a pool of flash or spinning drives."""
+    return _flash(pool) if pool.media is Media.FLASH else _spinning(pool)
 
 
-def _spinning(pool: Pool) -> tuple[Fraction, ...]:
-    touched = sum(back_end(pool), start=Fraction(0))
-    positioned = positioning(pool) / (PPM * MILLI)
-    byte = per(1, pool.drive_rate)
+def _flash(pool: Pool) -> tuple[Hold, ...]:
+    back_reads, back_writes = back_end(pool)
+    read, write = (
+        per(PPM * MILLI, rating) for rating in (pool.reads_at_most, pool.writes_at_most)
+    )
+    byte = per(PPM, pool.drive_rate)
     return (
-        positioned,
-        Fraction(0),
-        positioned * touched,
-        byte,
-        byte + positions(pool) * positioning(pool) / PPM,
-        byte * touched,
+        Hold(Kind.RANDOM, Fraction(1), read, byte),
+        Hold(Kind.SEQUENTIAL, Fraction(1), read, byte),
+        Hold(Kind.WRITE, back_reads, read, byte),
+        Hold(Kind.WRITE, back_writes, write, byte),
+    )
+
+
+def _spinning(pool: Pool) -> tuple[Hold, ...]:
+    touched = sum(back_end(pool), start=Fraction(0))
+    once, byte = positioning(pool), per(PPM, pool.drive_rate)
+    fetched = byte + positions(pool) * once
+    return (
+        Hold(Kind.RANDOM, Fraction(1), once, byte),
+        Hold(Kind.SEQUENTIAL, Fraction(1), Fraction(0), fetched),
+        Hold(Kind.WRITE, touched, once, byte),
     )
 
 

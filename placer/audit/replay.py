@@ -126,12 +126,16 @@ def first_day(code: str) -> Callable[[Case], Iterator[str]]:
 
 
 def cured_by(case: Case) -> Iterator[str]:
-    """From the date of the cure on, every limit is kept without allowance."""
+    """From the date of the cure on, every limit is kept without allowance.
+
+    What the plan itself names as a shortage is no surprise.
+    """
     cured = case.estate.policy.cured_by
     if not cured:
         return
+    named = {(shortage.limit, shortage.where) for shortage in case.plan.shortages}
     for code in REPLAYED:
-        told = set()
+        told = {where for limit, where in named if limit == code}
         for span in spans(case, code):
             hour = span.worst(span.whole())
             late = span.until > cured and span.gauge.where not in told

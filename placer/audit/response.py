@@ -1,4 +1,7 @@
-"""Mean responses of volumes in their busiest hour, in whole µs; 0 is unknown."""
+"""Mean responses of volumes in their busiest hour, in whole µs; 0 is unknown.
+
+The wait is that behind all requests at the drives, whoever's they are.
+"""
 
 from collections.abc import Mapping
 from fractions import Fraction
@@ -8,6 +11,7 @@ from math import ceil
 from placer.audit import limits, machines
 from placer.audit.case import Case
 from placer.audit.demand import busiest, busiest_load
+from placer.audit.mix import Mix, of_volume, residual, together
 from placer.estate import Array, Media, Pool, Volume
 from placer.units import MILLI, PPM
 
@@ -15,10 +19,29 @@ MOST_BUSY = Fraction(95, 100)
 """No wait is computed above this share: the formula has a pole at 1."""
 
 
+def wait(share: Fraction, left: Fraction) -> Fraction:
+    """Return how long a request waits for its drive [µs].
+
+    Parameters
+    ----------
+    share
+        [1] busy share of the drive.
+    left
+        [µs] mean of what is left of the request in service.
+
+    References
+    ----------
+    Pollaczek-Khinchine: R. Cooper, Introduction to Queueing Theory, 2nd edition 1981,
+    p. 189.
+    """
+    busy = min(share, MOST_BUSY)
+    return busy / (1 - busy) * left
+
+
 def response(
-    volume: Volume, pool: Pool, array: Array, hits: Fraction, share: Fraction
+    volume: Volume, pool: Pool, array: Array, hits: Fraction, waited: Fraction
 ) -> int:
-    """Return the mean response of a volume on a pool whose drives are busy by a share.
+    """Return the mean response of a volume on a pool where reads wait so long [µs].
 
     The load counts as measured: the factor of a tenant is that of all its parts, so
     neither the size of a read nor the mix of reads and writes depends on it.
@@ -31,12 +54,8 @@ def response(
         Where it is served.
     hits
         [1] share of its reads that the cache there answers.
-    share
-        [1] busy share of the drives.
-
-    References
-    ----------
-    Pollaczek-Khinchine with fixed service times; half a turn is 30 / rpm s.
+    waited
+        [µs] how long a read waits for its drive.
     """
     load = busiest_load(volume)
     asked = load.reads + load.writes
@@ -44,7 +63,7 @@ def response(
         return 0
     read = Fraction(0)
     if load.reads:
-        at_drives = _at_drives(volume, pool, min(share, MOST_BUSY))
+        at_drives = _at_drives(volume, pool, waited)
         read = hits * array.read_hit_answer + (1 - hits) * at_drives
     return ceil((load.reads * read + load.writes * array.write_answer) / asked)
 
@@ -58,18 +77,13 @@ def unmodelled(pool: Pool) -> bool:
     return not pool.seek and not pool.rpm
 
 
-def _at_drives(volume: Volume, pool: Pool, share: Fraction) -> Fraction:
+def _at_drives(volume: Volume, pool: Pool, waited: Fraction) -> Fraction:
     load = busiest_load(volume)
     size = Fraction(load.read_bytes * MILLI, load.reads)
-    transfer = size * machines.per(PPM, pool.drive_rate)
-    if pool.media is Media.FLASH:
-        idle = pool.read_time + transfer
-        holds = machines.per(PPM * MILLI, pool.reads_at_most) + transfer
-    else:
-        idle = holds = (
-            _times(volume, pool, size) * machines.positioning(pool) + transfer
-        )
-    waited = share * holds / (2 * (1 - share))
+    once: Fraction | int = pool.read_time
+    if pool.media is not Media.FLASH:
+        once = _times(volume, pool, size) * machines.positioning(pool)
+    idle = once + size * machines.per(PPM, pool.drive_rate)
     return (idle + waited) * pool.measured_factor / PPM
 
 
@@ -79,6 +93,38 @@ def _times(volume: Volume, pool: Pool, size: Fraction) -> Fraction:
     return random + (1 - random) * size * machines.positions(pool)
 
 
+class Drives:
+    """What drives are asked to do under one placement, with the loads of today."""
+
+    def __init__(
+        self, case: Case, where: Mapping[str, str], steps: Mapping[str, int]
+    ) -> None:
+        scene = limits.Scene(case, case.today, where, steps)
+        rows = limits.readings(scene, "pool-busy")
+        self._case = case
+        self._standing = case.members(where)
+        self._busy = {row.where: row.shares for row in rows}
+        self._mixes: dict[tuple[str, int], Mix] = {}
+
+    def busy(self, pool: str, hour: int) -> Fraction:
+        """Return the busy share in an hour; 0 where none is told."""
+        return self._busy[pool][hour] / 100 if pool in self._busy else Fraction(0)
+
+    def mix(self, pool: str, hour: int) -> Mix:
+        """Return all requests to the drives of a pool in an hour."""
+        if (pool, hour) not in self._mixes:
+            there = (self.own(each, pool, hour) for each in self._standing[pool])
+            self._mixes[pool, hour] = together(there)
+        return self._mixes[pool, hour]
+
+    def own(self, volume: Volume, pool: str, hour: int) -> Mix:
+        """Return the requests of one volume to the drives of a pool, were it there."""
+        caches, array = self._case.caches, self._case.pools[pool].array
+        reads, writes = self._case.today.loads[volume.id][4 * hour : 4 * hour + 2]
+        missed = Fraction(caches.misses(volume, array), caches.whole)
+        return of_volume(volume, volume.load[hour], (reads, writes), missed)
+
+
 class Answers:
     """Responses of the volumes of one case, today, promised and planned."""
 
@@ -86,47 +132,45 @@ class Answers:
         self.case = case
 
     @cached_property
-    def _busy_today(self) -> dict[str, tuple[Fraction, ...]]:
-        return self._busy(self.case.homes, {})
+    def _now(self) -> Drives:
+        return Drives(self.case, self.case.homes, {})
 
     @cached_property
-    def _busy_planned(self) -> dict[str, tuple[Fraction, ...]]:
-        return self._busy(self.case.targets, self.case.steps)
+    def _then(self) -> Drives:
+        return Drives(self.case, self.case.targets, self.case.steps)
 
-    def _busy(
-        self, where: Mapping[str, str], steps: Mapping[str, int]
-    ) -> dict[str, tuple[Fraction, ...]]:
-        scene = limits.Scene(self.case, self.case.today, where, steps)
-        rows = limits.readings(scene, "pool-busy")
-        return {row.where: tuple(part / 100 for part in row.shares) for row in rows}
-
-    def _at(self, volume: Volume, pool: Pool, share: Fraction) -> int:
+    def _at(self, volume: Volume, pool: Pool, share: Fraction, mix: Mix) -> int:
+        if unmodelled(pool):
+            return 0
         array = self.case.arrays[pool.array]
         hits = self.case.caches.hits(volume, array.name)
-        return response(volume, pool, array, hits, share)
+        waited = wait(share, residual(pool, mix))
+        return response(volume, pool, array, hits, waited)
 
-    def _in(
-        self, volume: Volume, pool: str, busy: Mapping[str, tuple[Fraction, ...]]
-    ) -> int:
-        share = busy[pool][busiest(volume)] if pool in busy else Fraction(0)
-        return self._at(volume, self.case.pools[pool], share)
+    def _served(self, volume: Volume, pool: str, drives: Drives) -> int:
+        hour = busiest(volume)
+        share, mix = drives.busy(pool, hour), drives.mix(pool, hour)
+        return self._at(volume, self.case.pools[pool], share, mix)
 
     def today(self, volume: Volume) -> int:
         """Return the response measured, or the modelled one at home today."""
-        return volume.response_measured or self._in(
-            volume, volume.home, self._busy_today
-        )
+        return volume.response_measured or self._served(volume, volume.home, self._now)
 
     def promised(self, volume: Volume, pool: str) -> int:
-        """Return the response at the busy ceiling of a pool; at home that of today."""
+        """Return the response at the busy ceiling of a pool; at home that of today.
+
+        The volume waits there behind what is served there today and its own requests.
+        """
         if pool == volume.home:
             return self.today(volume)
-        target = self.case.pools[pool]
-        return self._at(volume, target, Fraction(target.busy_ceiling, PPM))
+        target, hour = self.case.pools[pool], busiest(volume)
+        there, own = self._now.mix(pool, hour), self._now.own(volume, pool, hour)
+        share = Fraction(target.busy_ceiling, PPM)
+        return self._at(volume, target, share, together((there, own)))
 
     def planned(self, volume: Volume) -> int:
         """Return the response at the planned busy share, with the loads of today."""
         target = self.case.targets[volume.id]
         if target == volume.home and volume.response_measured:
             return volume.response_measured
-        return self._in(volume, target, self._busy_planned)
+        return self._served(volume, target, self._then)

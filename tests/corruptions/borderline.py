@@ -17,6 +17,7 @@ from corruptions.damage import (
     volume,
     window,
 )
+from corruptions.damaged_replay import lacking
 from corruptions.harbour import at
 from placer.estate import Control, Host, Rule, RuleKind
 from placer.units import GIB, KB, MB, MILLI
@@ -32,6 +33,7 @@ CLEAN: dict[str, Pair] = {
     "no date to finish by": policy(finish_by=0),
     "no date of a cure": policy(cured_by=0),
     "cured as the hold of tickets ends": policy(cured_by=at(3, 27, 22)),
+    "cured an hour late where the plan says so": lacking("old/spin"),
     "a window that names both arrays": window("second", arrays=("old", "inland")),
     "any number of cutovers": window("first", cutovers=0),
     "any number of copies": window("first", at_once=0),
@@ -51,7 +53,7 @@ CLEAN: dict[str, Pair] = {
     "1 µs off a response": placed("new/logs", response_today=207),
     "0.00001 % off a use": use("old/spin", "pool-busy", "planned", use=24.000_002),
     "a gap of 0.009 %": goal("effort", bound=769.931),
-    "4 % of relief spent": goal("relief", reached=16_800.0, bound=16_800.0),
+    "4 % of relief spent": goal("relief", reached=16_368.0, bound=16_368.0),
     "volumes that stay where their host would not reach": estate(
         hosts=(Host(name="office", arrays=("old",)),)
     ),

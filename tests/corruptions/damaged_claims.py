@@ -63,14 +63,14 @@ DAMAGES = (
         plan(bought=(Bought("new/flash", 1, 1),)),
     ),
     damage("claim-bound", "money below its bound", goal("money", bound=50_001.0)),
-    damage("claim-bound", "relief above its bound", goal("relief", bound=16_000)),
-    damage("claim-bound", "more than was reached", goal("relief", reached=16_100)),
+    damage("claim-bound", "relief above its bound", goal("relief", bound=15_750)),
+    damage("claim-bound", "more than was reached", goal("relief", reached=15_600)),
     damage("claim-uses", "called nearest in a plan", plan(uses=NEAREST)),
     damage("claim-bound", "a gap of 0.1 % is no proof", goal("effort", bound=769.2)),
     damage(
         "claim-bound",
         "6 % of relief spent",
-        goal("relief", reached=17_240, bound=17_240),
+        goal("relief", reached=16_717, bound=16_717),
     ),
     damage(
         "claim-uses", "0.1 % low", use("old/spin", "pool-busy", "planned", use=23.97)
@@ -100,7 +100,7 @@ DAMAGES = (
     damage(
         "claim-responses",
         "planned at the ceiling's response",
-        placed("old/tickets-2", response_planned=1_584),
+        placed("old/tickets-2", response_planned=1_849),
     ),
     damage(
         "claim-responses",

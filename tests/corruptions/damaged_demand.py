@@ -72,30 +72,52 @@ DAMAGES = (
         "freight is not planned for its cap",
         estate(tenants=(TENANTS[0], replace(TENANTS[1], plan_for_cap=False))),
         ANSWERS,
+        GOALS,
     ),
     damage(
         ANSWERS,
-        "songs as if none hit: 0.8 x 13,044.2 + 200",
-        placed("mole/songs", response_today=10_636),
+        "songs as if none hit: 0.8 x 13,027.7 + 200",
+        placed("mole/songs", response_today=10_623),
     ),
     damage(
         ANSWERS,
         "songs with 40 % of hits in half the cache",
-        placed("mole/songs", response_planned=248),
+        placed("mole/songs", response_planned=256),
     ),
-    damage(ANSWERS, "songs as modelled", placed("mole/songs", response_today=5_578)),
+    damage(ANSWERS, "songs as modelled", placed("mole/songs", response_today=5_572)),
     damage(
         ANSWERS,
-        "films as if all were random: half of 13,044.2 + 500",
-        placed("mole/films", response_today=6_773),
+        "films as if all were random: half of 13,027.7 + 500",
+        placed("mole/films", response_today=6_764),
     ),
     damage(
         ANSWERS, "manifests as modelled", placed("berth/manifests", response_today=361)
     ),
     damage(
+        ANSWERS,
+        "tickets wait behind reads alone: 0.0475 / 0.9525 x 550",
+        placed("old/tickets-2", response_planned=328),
+    ),
+    damage(
+        ANSWERS,
+        "films wait for what one of their own reads takes",
+        placed("mole/films", response_today=2_123),
+    ),
+    damage(
+        ANSWERS,
+        "one in a hundred reads of manifests has 1 MB, the others none",
+        volume("berth/manifests", large_share=10_000, large_size=1_000_000),
+        GOALS,
+    ),
+    damage(
+        GOALS,
+        "relief as if songs did not meet their own writes: 550 left",
+        goal("relief", value=15_746.66, reached=15_800, bound=15_800),
+    ),
+    damage(
         GOALS,
         "relief for all 300 requests that songs ask",
-        goal("relief", value=17_899.82, reached=17_899.82, bound=17_899.82),
+        goal("relief", value=17_378.66, reached=17_378.66, bound=17_378.66),
     ),
     damage(
         GOALS,

@@ -7,6 +7,7 @@ from corruptions.damage import Pair, array, both, damage, move, plan, policy, po
 from corruptions.harbour import ESTATE, at
 from corruptions.sailing import PLAN
 from placer.estate import Estate, Expansion
+from placer.plan import Shortage
 from placer.units import GIB, MILLI, MINUTES_PER_DAY
 
 USES = "claim-uses"
@@ -46,6 +47,14 @@ def shrinking(name: str, growth: int, pair: Pair) -> Pair:
         replace(v, load_growth=growth) if v.id == name else v for v in pair[0].volumes
     )
     return replace(pair[0], volumes=volumes), pair[1]
+
+
+def lacking(where: str) -> Pair:
+    """Name a shortage of room, and be due an hour before the hold of tickets ends."""
+    short = Shortage(
+        limit="pool-room", where=where, amount=50, unit="GiB", sentence="is short"
+    )
+    return both(policy(cured_by=at(3, 27, 21)), plan(shortages=(short,)))
 
 
 DAMAGES = (
@@ -125,6 +134,11 @@ DAMAGES = (
         "cured-by",
         "due a day after the start",
         policy(cured_by=at(3, 2) + MINUTES_PER_DAY),
+    ),
+    damage(
+        "cured-by",
+        "a shortage is named at another pool",
+        lacking("new/spin"),
     ),
     damage("cured-by", "mail never leaves", plan(moves=PLAN.moves[:0]), "move-list"),
 )

@@ -18,7 +18,16 @@ from placer.estate import (
     Window,
 )
 from placer.estate import Volume as Vol
-from placer.plan import Booking, Bought, Move, Placed, Plan, Reason, Status
+from placer.plan import (
+    Booking,
+    Bought,
+    Move,
+    Placed,
+    Plan,
+    Reason,
+    Shortage,
+    Status,
+)
 from placer.units import GIB, MB, MILLI
 
 DAY = 1_440
@@ -195,6 +204,43 @@ def test_the_allowance_ends_on_the_day_of_the_cure() -> None:
     for cured, expected in ((2 * DAY, set()), (2 * DAY - 1, {"cured-by"})):
         case = estate(crowd, pools, cured_by=cured)
         assert broken(case, plan(case, {"x": ("a/two", 1, 0)})) == expected
+
+
+@pytest.mark.parametrize(
+    ("limit", "where", "expected"),
+    [
+        ("pool-room", "a/one", set()),
+        ("pool-room", "a/two", {"cured-by"}),
+        ("pool-thin", "a/one", {"cured-by"}),
+    ],
+)
+def test_a_shortage_of_the_plan_excuses_the_limit_and_place_it_names(
+    limit: str, where: str, expected: set[str]
+) -> None:
+    """300 GiB stand in 250 until the third day, due on the second."""
+    crowd = (volume("x", "one"), volume("y", "one"), volume("z", "one"))
+    case = estate(crowd, (pool("one", 250), pool("two", 100)), cured_by=DAY)
+    made = plan(case, {"x": ("a/two", 1, 0)})
+    assert broken(case, made) == {"cured-by"}
+    assert broken(case, replace(made, shortages=(lack(limit, where),))) == expected
+
+
+def lack(limit: str, where: str) -> Shortage:
+    """Return a shortage of one limit at one place."""
+    return Shortage(
+        limit=limit, where=where, amount=50, unit="GiB", sentence="is short"
+    )
+
+
+def test_a_shortage_excuses_no_more_than_stands_today() -> None:
+    """The first-day rule is kept whatever the plan names: 350 GiB where 300 are."""
+    crowd = (volume("x", "one"), volume("y", "one"), volume("z", "one"))
+    pools = (pool("one", 250), pool("two", 400))
+    case = estate((*crowd, volume("w", "two")), pools, cured_by=2 * DAY)
+    ways = {n: ("a/two", 1, 30 * at) for at, n in enumerate(("x", "y"))}
+    made = plan(case, ways | {"w": ("a/one", 1, 60)})
+    named = replace(made, shortages=(lack("pool-room", "a/one"),))
+    assert broken(case, named) == {"pool-room"}
 
 
 def test_load_goes_where_it_is_served_at_the_cutover() -> None:

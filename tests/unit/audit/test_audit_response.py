@@ -5,7 +5,8 @@ from fractions import Fraction
 
 import pytest
 
-from placer.audit.response import response
+from placer.audit.mix import of_volume, residual
+from placer.audit.response import response, wait
 from placer.estate import Array, Load, Media, Pool, Volume
 from placer.units import KIB, MB, MIB, MILLI, PPM
 
@@ -26,7 +27,7 @@ def answer(
     random: int = PPM,
     hits: Fraction = NONE,
 ) -> int:
-    """Return the response of a volume with one hour of load."""
+    """Return the response of a volume that has drives, busy as told, to itself."""
     volume = Volume(
         array="a",
         name="v",
@@ -37,7 +38,8 @@ def answer(
         load=(load,),
         random_reads=random,
     )
-    return response(volume, pool, array, hits, busy)
+    own = of_volume(volume, load, (load.reads, load.writes), 1 - hits)
+    return response(volume, pool, array, hits, wait(busy, residual(pool, own)))
 
 
 # Random read of 4 KB, recomputed from the drives' data: OSTEP, tables 37.1 and 37.2.
