@@ -153,7 +153,8 @@ class Pool:
     drive], ``drive_rate`` [B/s per drive], ``thin_at_most`` [ppm], ``requests_at_most``
     [1/1000 s, whole pool] and ``dwpd`` [ppm, drive writes per day]; times are [µs],
     sizes [B], shares and ratios [ppm].  ``busy_measured`` 0 means not measured;
-    ``measured_factor`` is what measured times are of modelled ones.
+    ``measured_factor`` is what measured times are of modelled ones; with
+    ``one_drive_lost`` the busy ceiling must hold in a group that lost a drive.
     """
 
     array: str
@@ -170,6 +171,7 @@ class Pool:
     thin_at_most: int = 0
     reduction: int = 1_000_000
     in_place: bool = True
+    one_drive_lost: bool = False
     busy_ceiling: int = 700_000
     skew: int = 1_200_000
     read_time: int = 0
@@ -339,6 +341,7 @@ class Policy:
     nights_kept_free: int = 200_000
     cutover_minutes: int = 60
     cutover_counts_as: int = 10 * 2**30
+    latent_demand: int = 1_500_000
     seed: int = 1
     time_limit: int = 60
 
