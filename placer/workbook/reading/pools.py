@@ -32,6 +32,7 @@ _LOAD = {
     "rpm": "rpm",
     "seek": "seek",
     "skew": "skew",
+    "pool busy measured": "busy_measured",
     "measured factor": "measured_factor",
     "drive writes per day": "dwpd",
 }
@@ -82,7 +83,6 @@ def _columns(row: Row, media: Media) -> Iterator[tuple[str, str]]:
         "overhead": modelled and from_drives,
         "busy ceiling": modelled,
         "prefetch unit": by_drive and media is Media.SPINNING,
-        "pool busy measured": False,
         **dict.fromkeys(_LOAD, by_drive),
         **dict.fromkeys(_WEAR, row.exact("drive writes per day") > 0),
     }
@@ -90,7 +90,6 @@ def _columns(row: Row, media: Media) -> Iterator[tuple[str, str]]:
         "overhead": "overhead",
         "busy ceiling": "busy_ceiling",
         "prefetch unit": "prefetch_unit",
-        "pool busy measured": "busy_measured",
     }
     fields = _ROOM | _DRIVES | own | _LOAD | _WEAR
     for column, field in fields.items():

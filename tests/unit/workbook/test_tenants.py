@@ -85,3 +85,18 @@ def test_tenants_told_apart_by_case_alone_are_refused(tmp_path: Path) -> None:
 def test_a_tenant_has_one_row(tmp_path: Path) -> None:
     row: list[object] = ["ferries", 5, 5, None]
     assert only_error(intake(tmp_path, with_tenants(row, row))).code == "duplicate"
+
+
+@pytest.mark.parametrize("caps", [(5, None), (None, 5), (5, 5)])
+def test_either_cap_is_enough_to_plan_for(
+    tmp_path: Path, caps: tuple[object, object]
+) -> None:
+    (found,) = tenants(tmp_path, ["ferries", *caps, "cap"])
+    assert found.plan_for_cap
+
+
+def test_a_cap_that_cannot_be_read_is_not_said_to_be_missing_too(
+    tmp_path: Path,
+) -> None:
+    found = intake(tmp_path, with_tenants(["ferries", "much", None, "cap"]))
+    assert only_error(found).place.cell == "B2"

@@ -55,6 +55,10 @@ def test_blank_shares_are_assumptions_that_count_the_cells(tmp_path: Path) -> No
     assert (assumed["snapshots"].value, assumed["snapshots"].cells) == ("0 GiB", 3)
 
 
+def test_days_are_read_without_snapshots_too(tmp_path: Path) -> None:
+    assert volume(tmp_path, **{"snapshot days": 30}).snapshot_days == 30
+
+
 def test_days_are_assumed_only_for_snapshots_there_are(tmp_path: Path) -> None:
     sheets = with_columns(**{"snapshots (GiB)": 5})
     assumed = {a.column: a.cells for a in estate(tmp_path, sheets).assumptions}
@@ -100,11 +104,13 @@ def test_a_role_that_is_none_is_refused_with_the_words_there_are(
 
 
 def test_unknown_caches_are_said_where_any_read_hits_one(tmp_path: Path) -> None:
-    def unknown(**cells: object) -> list[int]:
-        sheets = with_columns(**cells)
-        sheets["arrays"] = [["array", "cache (GiB)"], ["L", 64]]
+    def unknown(hits: int, *caches: list[object]) -> list[int]:
+        sheets = with_columns(**{"read hits (%)": hits})
+        sheets["arrays"] = [["array", "cache (GiB)"], *caches]
         assumed = estate(tmp_path, sheets).assumptions
         return [a.cells for a in assumed if a.column == "cache"]
 
-    assert unknown(**{"read hits (%)": 40}) == [1]
-    assert unknown(**{"read hits (%)": 0}) == []
+    assert unknown(40, ["K", None]) == [2]
+    assert unknown(40, ["K", 256]) == [1]
+    assert unknown(40, ["K", 256], ["L", 64]) == []
+    assert unknown(0, ["K", None]) == []
