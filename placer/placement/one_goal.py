@@ -37,7 +37,8 @@ class OneGoal:
         """Return the best solution and the highest bound found in the time."""
         relaxed = solver.relax(self._program, self._cost)
         if relaxed is None:
-            return solver.Answer(None, -np.inf, proven=True, impossible=True)
+            known = start is not None
+            return solver.Answer(start, -np.inf, proven=not known, impossible=not known)
         best = self._joined(solver.Answer(start, relaxed.value, False, False))
         if self._far(best, PROVEN):
             best = self._joined(self._chained(relaxed, best), best)

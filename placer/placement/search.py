@@ -63,7 +63,7 @@ def search(
         if answer.x is None:
             return Found(None, tuple(goals), program, answer.impossible)
         x = answer.x
-        goals.append(_goal(cost, answer, watch.halted()))
+        goals.append(_goal(cost, answer, effort))
         watch.tell(goals[-1])
         if number < len(costs) - 1:
             program = _kept(program, cost, x)
@@ -85,7 +85,7 @@ def _polished(
     return x
 
 
-def _goal(cost: Cost, answer: solver.Answer, halted: bool) -> Goal:
+def _goal(cost: Cost, answer: solver.Answer, effort: Effort) -> Goal:
     assert answer.x is not None
     value = float(cost.vector @ answer.x)
     reached = _stated(cost, value)
@@ -96,16 +96,16 @@ def _goal(cost: Cost, answer: solver.Answer, halted: bool) -> Goal:
         reached=reached,
         bound=_stated(cost, float(answer.bound)),
         unit=cost.unit,
-        stopped=_stopped(distance, halted),
+        stopped=_stopped(distance, effort),
     )
 
 
-def _stopped(distance: float, halted: bool) -> Stopped:
+def _stopped(distance: float, effort: Effort) -> Stopped:
     if distance <= PROVEN:
         return Stopped.DONE
-    if distance <= NEAR_ENOUGH:
+    if distance <= effort.near_enough:
         return Stopped.NEAR
-    return Stopped.INTERRUPT if halted else Stopped.TIME
+    return Stopped.INTERRUPT if effort.watch.halted() else Stopped.TIME
 
 
 def _stated(cost: Cost, value: float) -> float:

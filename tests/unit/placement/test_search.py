@@ -4,6 +4,7 @@ import numpy as np
 import pytest
 from unit.placement.programs import goals, program, solutions
 
+from placer.placement import solver
 from placer.placement.goals import Cost
 from placer.placement.matrix import Builder, Floats, Program, RowKey
 from placer.placement.search import Found, search
@@ -134,3 +135,45 @@ def test_a_goal_that_nothing_changes_is_reached_at_once() -> None:
     found = search(rows, (idle, gain), SECONDS, start, near_enough=0)
     assert [goal.value for goal in found.goals] == [0, 5]
     assert str(found.goals[0].value) == "0.0", "never minus nought"
+
+
+NEARLY = np.array([1.0, 0.0, 1.0])
+
+
+@pytest.mark.parametrize(
+    ("near_enough", "stopped"), [(0.6, Stopped.NEAR), (0.4, Stopped.INTERRUPT)]
+)
+def test_near_enough_is_what_the_caller_calls_so(
+    near_enough: float, stopped: Stopped
+) -> None:
+    """4 of at most 6: half of what was reached is missing."""
+    rows, gain, _ = knapsack()
+    halted = Watch(halted=lambda: True)
+    goal = search(rows, (gain,), SECONDS, NEARLY, halted, near_enough).goals[0]
+    assert goal.gap == pytest.approx(0.5)
+    assert goal.stopped is stopped
+
+
+def test_where_nothing_is_near_enough_a_small_gap_is_no_end() -> None:
+    builder = Builder(2, 2)
+    builder.at_most(RowKey("room"), [0, 1], np.ones(2), 2)
+    gain = Cost("relief", "ms/s", -np.array([10_000.0, 1.0]), -1)
+    start, halted = np.array([1.0, 0.0]), Watch(halted=lambda: True)
+    found = search(builder.build(), (gain,), SECONDS, start, halted, near_enough=0)
+    assert found.goals[0].gap == pytest.approx(1e-4)
+    assert found.goals[0].stopped is Stopped.INTERRUPT
+
+
+def test_a_relaxation_that_fails_does_not_lose_what_is_known(
+    monkeypatch: pytest.MonkeyPatch,
+) -> None:
+    """Rows at the edge of its tolerance may defeat it; the start still holds."""
+    rows, gain, start = knapsack()
+    monkeypatch.setattr(solver, "relax", lambda *_: None)
+    found = search(rows, (gain, gain), SECONDS, start)
+    assert found.x is not None
+    assert list(found.x) == list(start)
+    assert not found.impossible
+    assert [goal.value for goal in found.goals] == [3, 3]
+    assert all(np.isinf(goal.bound) for goal in found.goals)
+    assert {goal.stopped for goal in found.goals} == {Stopped.TIME}
