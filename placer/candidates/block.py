@@ -18,8 +18,9 @@ class Block:
     """Limits of one kind.
 
     The use of volume v placed in pool p is ``asks[v] @ costs[p]`` in each hour, less
-    ``eased[v, p]`` of ``asks[v] @ ease[p]``, and ``moved[v] * move_costs[p]`` more in
-    each hour if p is not its home.  It counts for the owner of p.
+    ``eased[v, p]`` of ``asks[v] @ ease[p]``, all of it ``swollen[v, p]`` times, and
+    ``moved[v] * move_costs[p]`` more in each hour if p is not its home.  It counts for
+    the owner of p.
 
     Attributes
     ----------
@@ -35,6 +36,8 @@ class Block:
         (pools, q).
     eased
         (volumes, pools) share of the reads that the array's cache answers.
+    swollen
+        (volumes, pools) what the load becomes on media that can serve more of it.
     limits
         (owners, steps + 1) what is allowed once k expansion steps are bought.
     home
@@ -56,6 +59,7 @@ class Block:
     move_costs: Floats
     ease: Floats
     eased: Floats
+    swollen: Floats
     hourly: bool = False
     unit: str = ""
     scale: float = 1.0
@@ -68,14 +72,16 @@ class Block:
     def column(self, volume: int, pool: int) -> Floats:
         """Return the use of one volume in one pool, (hours,)."""
         eased = self.costs[pool] - self.eased[volume, pool] * self.ease[pool]
-        stay: Floats = self.asks[volume] @ eased
+        stay: Floats = self.swollen[volume, pool] * (self.asks[volume] @ eased)
         return stay + self._way(volume, pool)
 
     def use(self, places: Ints) -> Floats:
         """Return the use of each owner and hour, (owners, hours), for a placement."""
         total = np.zeros((len(self.owners), self.hours))
-        eased = self.eased[np.arange(len(places)), places][:, None] * self.ease[places]
-        per_volume = np.einsum("vhq,vq->vh", self.asks, self.costs[places] - eased)
+        every = np.arange(len(places))
+        eased = self.eased[every, places][:, None] * self.ease[places]
+        costs = (self.costs[places] - eased) * self.swollen[every, places][:, None]
+        per_volume = np.einsum("vhq,vq->vh", self.asks, costs)
         away = places != self.home
         per_volume += (self.moved * self.move_costs[places] * away)[:, None]
         owners = self.owner_of[places]

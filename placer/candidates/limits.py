@@ -13,13 +13,14 @@ import numpy as np
 
 from placer.candidates.block import Block, Floats, Ints
 from placer.candidates.loads import loads
-from placer.estate import Array, Estate, Pool
+from placer.estate import Array, Estate, Media, Pool
 from placer.physics import capacity, controllers, demand, drives, flash
 from placer.physics.cache import kept_hits
 from placer.units import GIB, PERCENT, PPM, SECONDS_PER_DAY, TB
 
 NOBODY = -1
 READS = (0, 2, 4, 5)
+SATURATED = 0.95
 
 Factors = tuple[float, ...]
 
@@ -122,7 +123,7 @@ def pool_busy(date: Date) -> Block:
     pools = [pool for pool in date.estate.pools if costs[pool.id]]
     return _block(
         date,
-        Kind("pool-busy", "drives", hourly=True, reads=READS),
+        Kind("pool-busy", "drives", load=True, hourly=True, reads=READS),
         date.drive_loads,
         _by_pool(date, pools, _busy_at_most),
         lambda pool: _factors(costs[pool.id]),
@@ -134,7 +135,7 @@ def pool_wear(date: Date) -> Block:
     pools = [pool for pool in date.estate.pools if flash.is_worn(pool)]
     return _block(
         date,
-        Kind("pool-wear", "TB", TB),
+        Kind("pool-wear", "TB", TB, load=True),
         date.loads[:, :, 3].mean(axis=1)[:, None, None],
         _by_pool(date, pools, flash.budget),
         lambda pool: (
@@ -150,7 +151,7 @@ def controller_busy(date: Date) -> Block:
     arrays = [array for array in date.estate.arrays if costs[array.name]]
     return _block(
         date,
-        Kind("controller-busy", "%", PERCENT / PPM, hourly=True),
+        Kind("controller-busy", "%", PERCENT / PPM, load=True, hourly=True),
         date.loads,
         _by_array(date, arrays, lambda array: array.controller_ceiling / PPM),
         lambda pool: _controller_factors(costs[pool.array]),
@@ -179,16 +180,42 @@ RULES: tuple[Callable[[Date], Block], ...] = (
 )
 
 
+def latent(date: Date) -> Floats:
+    """Return what loads become (volumes, pools): saturated drives hold demand back."""
+    policy, pools = date.estate.policy, date.estate.pools
+    crowded = np.array([_saturated(date, i) for i in range(len(pools))])[date.home]
+    faster = np.array([pool.media is Media.FLASH for pool in pools])
+    return np.where(np.outer(crowded, faster), policy.latent_demand / PPM, 1.0)
+
+
+def _saturated(date: Date, column: int) -> bool:
+    """Return whether a spinning pool could not serve more today."""
+    pool = date.estate.pools[column]
+    cost = drives.busy_cost(pool)
+    if pool.media is not Media.SPINNING or cost is None:
+        return False
+    if pool.busy_measured:
+        return pool.busy_measured >= SATURATED * PPM
+    today = Date(date.estate, 0)
+    here = today.home == column
+    missed = 1 - np.outer(today.hits[here, column], np.isin(np.arange(6), READS))
+    asked = (today.drive_loads[here] * missed[:, None, :]).sum(axis=0)
+    busy = asked @ np.array(_factors(cost)) / max(drives.busy_drives(pool), 1)
+    return bool(busy.max(initial=0.0) >= SATURATED)
+
+
 @dataclass(frozen=True, slots=True)
 class Kind:
     """Rule of a block, unit of its report, and the limit's own units in one of it.
 
-    ``reads`` tells which of the asks a read hit spares the owner.
+    ``load`` tells that the asks are load, which may swell on faster media; ``reads``
+    which of the asks a read hit spares the owner.
     """
 
     code: str
     unit: str
     scale: float = 1.0
+    load: bool = False
     hourly: bool = False
     reads: tuple[int, ...] = ()
 
@@ -242,6 +269,7 @@ def _block(
         costs=costs,
         ease=costs * spared,
         eased=date.hits,
+        swollen=latent(date) if kind.load else np.ones_like(date.hits),
         hourly=kind.hourly,
         limits=np.array([owners.limits[name] for name in names]),
         home=date.home,

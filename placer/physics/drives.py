@@ -80,28 +80,31 @@ def _scaled(cost: BusyCost, factor: float) -> BusyCost:
 
 
 def _flash(pool: Pool) -> BusyCost:
-    cost = protection.of_pool(pool)
+    cost = protection.planned_for(pool)
+    per_read, per_write = float(cost.per_read), cost.per_write
     read, write = _per(pool.reads_at_most), _per(pool.writes_at_most)
     byte = transfer(1, pool)
     return BusyCost(
-        read=read,
-        write=float(cost.reads) * read + float(cost.writes) * write,
-        read_byte=byte,
-        write_byte=byte * float(cost.total),
+        read=read * per_read,
+        write=float(per_write.reads) * read + float(per_write.writes) * write,
+        read_byte=byte * per_read,
+        write_byte=byte * float(per_write.total),
     )
 
 
 def _spinning(pool: Pool) -> BusyCost:
     """Random reads and writes position each; a stream once per prefetch unit."""
-    cost = float(protection.of_pool(pool).total)
+    cost = protection.planned_for(pool)
+    per_read, per_write = float(cost.per_read), float(cost.per_write.total)
     seek, byte = positioning(pool), transfer(1, pool)
+    streamed = seek / pool.prefetch_unit if pool.prefetch_unit else 0.0
     return BusyCost(
         read=0.0,
-        write=seek * cost,
-        read_byte=byte,
-        write_byte=byte * cost,
-        random_read=seek,
-        stream_byte=seek / pool.prefetch_unit if pool.prefetch_unit else 0.0,
+        write=seek * per_write,
+        read_byte=byte * per_read,
+        write_byte=byte * per_write,
+        random_read=seek * per_read,
+        stream_byte=streamed * per_read,
     )
 
 
