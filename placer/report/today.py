@@ -110,5 +110,5 @@ def _accuracy(compared: Sequence[Compared]) -> str:
             f": measured is {min(ratios):.2f} to {max(ratios):.2f} of modelled, "
             f"{median(ratios):.2f} in the middle"
         )
-    rest = ", and each of the others is a warning below"
-    return f"{said}{rest if near < len(compared) else ''}."
+    rest = " What it does not explain is a warning below."
+    return f"{said}.{rest if near < len(compared) else ''}"

@@ -54,21 +54,21 @@ def test_a_sentence_says_how_near_the_model_comes() -> None:
     text = " ".join(check_text(None, (), (), (*BUSY, *RESPONSES)).split())
     assert (
         "The model explains 3 of 4 figures: measured is 0.90 to 1.40 of modelled, "
-        "1.10 in the middle, and each of the others is a warning below."
+        "1.10 in the middle. What it does not explain is a warning below."
     ) in text
 
 
 def test_nothing_is_said_of_others_where_all_are_near() -> None:
     text = " ".join(check_text(None, (), (), BUSY[1:]).split())
     assert "2 of 2 figures: measured is 0.90 to 1.05 of modelled" in text
-    assert "others" not in text
+    assert "warning below" not in text
 
 
 def test_what_the_model_says_nothing_of_has_no_proportion() -> None:
     figure = Figure("quay", "controller busy", 0, 12, "%", near=False)
     assert ["quay,", "controller", "busy", "0", "%", "12", "%", "-"] in cells(figure)
     text = check_text(None, (), (), (figure,))
-    assert "0 of 1 figures, and each" in " ".join(text.split())
+    assert "0 of 1 figures. What it does not explain" in " ".join(text.split())
     assert "inf" not in text
 
 
