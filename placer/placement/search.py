@@ -115,7 +115,9 @@ def _stated(cost: Cost, value: float) -> float:
 
 def at_solution(cost: Cost, goal: Goal, x: Floats) -> Goal:
     """Return the goal with the value that a solution has for it."""
-    return replace(goal, value=_stated(cost, float(cost.vector @ x)))
+    value = _stated(cost, float(cost.vector @ x))
+    best = cost.sign * min(cost.sign * goal.reached, cost.sign * value)
+    return replace(goal, value=value, reached=best)
 
 
 def _kept(program: Program, cost: Cost, x: Floats) -> Program:
