@@ -4,23 +4,27 @@ A request that finds a drive busy waits for what is left of the one in service. 
 longer in the mean than half a service: the longer a request, the likelier to be met.
 """
 
-from collections.abc import Iterable
+from collections.abc import Iterable, Sequence
 from dataclasses import dataclass
 from fractions import Fraction
+from math import ceil
 
 from placer.audit import machines
-from placer.audit.machines import Kind
+from placer.audit.machines import Hold, Kind
 from placer.estate import Load, Pool, Volume
 from placer.units import MILLI, PPM
 
 
 @dataclass(frozen=True, slots=True)
 class Moments:
-    """Requests of one kind: their number, bytes and squares of bytes, each per time."""
+    """Requests of one kind: their number, bytes and squares of bytes, each per time.
 
-    number: Fraction = Fraction(0)
-    size: Fraction = Fraction(0)
-    square: Fraction = Fraction(0)
+    They are whole numbers of fine parts, so that sums over volumes stay exact and quick.
+    """
+
+    number: int = 0
+    size: int = 0
+    square: int = 0
 
     def __add__(self, other: "Moments") -> "Moments":
         """Return the requests of both."""
@@ -30,41 +34,46 @@ class Moments:
             self.square + other.square,
         )
 
-    def times(self, factor: Fraction | int) -> "Moments":
-        """Return so many times the requests."""
-        return Moments(self.number * factor, self.size * factor, self.square * factor)
+    def part(self, share: Fraction) -> "Moments":
+        """Return a share of the requests, rounded up."""
+        top, bottom = share.as_integer_ratio()
+        return Moments(
+            -(-self.number * top // bottom),
+            -(-self.size * top // bottom),
+            -(-self.square * top // bottom),
+        )
 
-    def held(self, once: Fraction, each_byte: Fraction) -> Fraction:
-        """Return the sum of s, where s = once + each_byte x bytes."""
-        return once * self.number + each_byte * self.size
+    def held(self, hold: Hold) -> Fraction:
+        """Return the sum of n s, where s = once + each byte x bytes."""
+        return hold.times * (hold.once * self.number + hold.each_byte * self.size)
 
-    def held_squared(self, once: Fraction, each_byte: Fraction) -> Fraction:
-        """Return the sum of s^2."""
-        cross = 2 * once * each_byte * self.size
-        return once**2 * self.number + cross + each_byte**2 * self.square
+    def held_squared(self, hold: Hold) -> Fraction:
+        """Return the sum of n s^2."""
+        once, byte = hold.once, hold.each_byte
+        cross = 2 * once * byte * self.size
+        return hold.times * (once**2 * self.number + cross + byte**2 * self.square)
 
 
+NOTHING = Moments()
 Mix = dict[Kind, Moments]
 
 
-def one(volume: Volume, mean: Fraction) -> Moments:
-    """Return one request of a volume whose requests have a mean size [B].
+def mean_square(volume: Volume, mean: Fraction) -> Fraction:
+    """Return the mean square of the sizes of requests with a mean size [B].
 
     Part of them may be large: then the others are as small as the mean asks.  Where
     none are left, or no size is known, all are alike.
     """
     share = Fraction(volume.large_share, PPM)
     if not 0 < share < 1 or not volume.large_size:
-        return Moments(Fraction(1), mean, mean**2)
+        return mean**2
     large = min(Fraction(volume.large_size), mean / share)
     small = (mean - share * large) / (1 - share)
-    return Moments(Fraction(1), mean, share * large**2 + (1 - share) * small**2)
+    return share * large**2 + (1 - share) * small**2
 
 
-def of_volume(
-    volume: Volume, load: Load, asked: tuple[int, int], missed: Fraction
-) -> Mix:
-    """Return what a volume asks of drives.
+def of_hosts(volume: Volume, load: Load, counted: Sequence[int]) -> tuple[Moments, ...]:
+    """Return the reads and the writes that hosts ask for, whether a cache has them.
 
     Parameters
     ----------
@@ -72,31 +81,34 @@ def of_volume(
         The volume.
     load
         Its load of the hour as measured, which tells the sizes.
-    asked
+    counted
         [any] reads and writes as they count.
-    missed
-        [1] share of the reads that no cache answers.
     """
-    random = Fraction(volume.random_reads, PPM)
-    reads = _requests(volume, load.reads, load.read_bytes, asked[0] * missed)
+    sizes = (load.reads, load.read_bytes), (load.writes, load.write_bytes)
+    return tuple(
+        _requests(volume, Fraction(size * MILLI, number), count) if number else NOTHING
+        for (number, size), count in zip(sizes, counted, strict=True)
+    )
+
+
+def _requests(volume: Volume, mean: Fraction, count: int) -> Moments:
+    return Moments(count, ceil(mean * count), ceil(mean_square(volume, mean) * count))
+
+
+def at_drives(volume: Volume, hosts: Sequence[Moments], missed: Fraction) -> Mix:
+    """Return what is left for drives when caches answer all but a share of reads."""
+    reads, writes = hosts
+    random = Fraction(volume.random_reads, PPM) * missed
     return {
-        Kind.RANDOM: reads.times(random),
-        Kind.SEQUENTIAL: reads.times(1 - random),
-        Kind.WRITE: _requests(volume, load.writes, load.write_bytes, asked[1]),
+        Kind.RANDOM: reads.part(random),
+        Kind.SEQUENTIAL: reads.part(missed - random),
+        Kind.WRITE: writes,
     }
-
-
-def _requests(
-    volume: Volume, number: int, size: int, counted: Fraction | int
-) -> Moments:
-    if not number:
-        return Moments()
-    return one(volume, Fraction(size * MILLI, number)).times(counted)
 
 
 def together(mixes: Iterable[Mix]) -> Mix:
     """Return all requests of some mixes."""
-    total = dict.fromkeys(Kind, Moments())
+    total = dict.fromkeys(Kind, NOTHING)
     for mix in mixes:
         total = {kind: total[kind] + mix[kind] for kind in Kind}
     return total
@@ -110,9 +122,7 @@ def residual(pool: Pool, mix: Mix) -> Fraction:
     Mean residual life, E[S^2] / (2 E[S]): Pollaczek-Khinchine, R. Cooper, Introduction
     to Queueing Theory, 2nd edition 1981, p. 189.
     """
-    held = squared = Fraction(0)
-    for hold in machines.holds(pool):
-        requests = mix[hold.kind].times(hold.times)
-        held += requests.held(hold.once, hold.each_byte)
-        squared += requests.held_squared(hold.once, hold.each_byte)
-    return squared / (2 * held) if held else Fraction(0)
+    holds = machines.holds(pool)
+    held = sum(mix[hold.kind].held(hold) for hold in holds)
+    squared = sum(mix[hold.kind].held_squared(hold) for hold in holds)
+    return Fraction(squared, 2 * held) if held else Fraction(0)

@@ -11,7 +11,7 @@ from math import ceil
 from placer.audit import limits, machines
 from placer.audit.case import Case
 from placer.audit.demand import busiest, busiest_load
-from placer.audit.mix import Mix, of_volume, residual, together
+from placer.audit.mix import Mix, Moments, at_drives, of_hosts, residual, together
 from placer.estate import Array, Media, Pool, Volume
 from placer.units import MILLI, PPM
 
@@ -93,15 +93,40 @@ def _times(volume: Volume, pool: Pool, size: Fraction) -> Fraction:
     return random + (1 - random) * size * machines.positions(pool)
 
 
+class Asked:
+    """What each volume asks of drives, with the loads of today."""
+
+    def __init__(self, case: Case) -> None:
+        self._case = case
+        self._hosts: dict[tuple[str, int], tuple[Moments, ...]] = {}
+
+    def of(self, volume: Volume, pool: str, hour: int) -> Mix:
+        """Return the requests of a volume to the drives of a pool, were it there."""
+        caches, array = self._case.caches, self._case.pools[pool].array
+        missed = Fraction(caches.misses(volume, array), caches.whole)
+        return at_drives(volume, self._of_hosts(volume, hour), missed)
+
+    def _of_hosts(self, volume: Volume, hour: int) -> tuple[Moments, ...]:
+        if (volume.id, hour) not in self._hosts:
+            counted = self._case.today.loads[volume.id][4 * hour : 4 * hour + 2]
+            asked = of_hosts(volume, volume.load[hour], counted)
+            self._hosts[volume.id, hour] = asked
+        return self._hosts[volume.id, hour]
+
+
 class Drives:
-    """What drives are asked to do under one placement, with the loads of today."""
+    """What the drives of pools do under one placement, with the loads of today."""
 
     def __init__(
-        self, case: Case, where: Mapping[str, str], steps: Mapping[str, int]
+        self,
+        asked: Asked,
+        case: Case,
+        where: Mapping[str, str],
+        steps: Mapping[str, int],
     ) -> None:
         scene = limits.Scene(case, case.today, where, steps)
         rows = limits.readings(scene, "pool-busy")
-        self._case = case
+        self._asked = asked
         self._standing = case.members(where)
         self._busy = {row.where: row.shares for row in rows}
         self._mixes: dict[tuple[str, int], Mix] = {}
@@ -113,16 +138,9 @@ class Drives:
     def mix(self, pool: str, hour: int) -> Mix:
         """Return all requests to the drives of a pool in an hour."""
         if (pool, hour) not in self._mixes:
-            there = (self.own(each, pool, hour) for each in self._standing[pool])
+            there = (self._asked.of(each, pool, hour) for each in self._standing[pool])
             self._mixes[pool, hour] = together(there)
         return self._mixes[pool, hour]
-
-    def own(self, volume: Volume, pool: str, hour: int) -> Mix:
-        """Return the requests of one volume to the drives of a pool, were it there."""
-        caches, array = self._case.caches, self._case.pools[pool].array
-        reads, writes = self._case.today.loads[volume.id][4 * hour : 4 * hour + 2]
-        missed = Fraction(caches.misses(volume, array), caches.whole)
-        return of_volume(volume, volume.load[hour], (reads, writes), missed)
 
 
 class Answers:
@@ -130,14 +148,16 @@ class Answers:
 
     def __init__(self, case: Case) -> None:
         self.case = case
+        self._asked = Asked(case)
 
     @cached_property
     def _now(self) -> Drives:
-        return Drives(self.case, self.case.homes, {})
+        return Drives(self._asked, self.case, self.case.homes, {})
 
     @cached_property
     def _then(self) -> Drives:
-        return Drives(self.case, self.case.targets, self.case.steps)
+        case = self.case
+        return Drives(self._asked, case, case.targets, case.steps)
 
     def _at(self, volume: Volume, pool: Pool, share: Fraction, mix: Mix) -> int:
         if unmodelled(pool):
@@ -164,7 +184,7 @@ class Answers:
         if pool == volume.home:
             return self.today(volume)
         target, hour = self.case.pools[pool], busiest(volume)
-        there, own = self._now.mix(pool, hour), self._now.own(volume, pool, hour)
+        there, own = self._now.mix(pool, hour), self._asked.of(volume, pool, hour)
         share = Fraction(target.busy_ceiling, PPM)
         return self._at(volume, target, share, together((there, own)))
 

@@ -6,7 +6,7 @@ from fractions import Fraction
 import pytest
 
 from placer.audit.case import Case
-from placer.audit.mix import Mix, of_volume, one, residual, together
+from placer.audit.mix import Mix, at_drives, mean_square, of_hosts, residual, together
 from placer.audit.response import Answers
 from placer.estate import (
     Array,
@@ -130,7 +130,8 @@ def test_small_and_large_reads_share_the_wait_of_one_pool() -> None:
 def mix_of(load: Load, random: int = PPM, missed: int = 100) -> Mix:
     """Return the requests of one volume in one hour; missed reads in percent."""
     asking = replace(volume("v", load), random_reads=random)
-    return of_volume(asking, load, (load.reads, load.writes), Fraction(missed, 100))
+    hosts = of_hosts(asking, load, (load.reads, load.writes))
+    return at_drives(asking, hosts, Fraction(missed, 100))
 
 
 # Reads take 1.1 ms, writes 2.1; 10 of each from the hosts.
@@ -215,10 +216,7 @@ def test_large_requests_leave_the_mean_as_it_is(
 ) -> None:
     """By hand [KiB]: 0.1 x 256^2 + 0.9 x (6.4 / 0.9)^2; of 16 no more than 160 fit."""
     asking = replace(volume("v"), large_share=share, large_size=large * KIB)
-    request = one(asking, Fraction(mean * KIB))
-    assert request.number == 1
-    assert request.size == mean * KIB
-    assert request.square == square * KIB**2
+    assert mean_square(asking, Fraction(mean * KIB)) == square * KIB**2
 
 
 def test_large_requests_are_waited_for_by_all_on_the_pool() -> None:

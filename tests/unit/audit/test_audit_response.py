@@ -5,7 +5,7 @@ from fractions import Fraction
 
 import pytest
 
-from placer.audit.mix import of_volume, residual
+from placer.audit.mix import at_drives, of_hosts, residual
 from placer.audit.response import response, wait
 from placer.estate import Array, Load, Media, Pool, Volume
 from placer.units import KIB, MB, MIB, MILLI, PPM
@@ -38,7 +38,8 @@ def answer(
         load=(load,),
         random_reads=random,
     )
-    own = of_volume(volume, load, (load.reads, load.writes), 1 - hits)
+    hosts = of_hosts(volume, load, (load.reads, load.writes))
+    own = at_drives(volume, hosts, 1 - hits)
     return response(volume, pool, array, hits, wait(busy, residual(pool, own)))
 
 
