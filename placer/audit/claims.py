@@ -9,7 +9,7 @@ from placer.audit.case import Case
 from placer.audit.goals import ORDER, UNITS, gain, missed_steps, values_of
 from placer.audit.limits import CODES, Reading, Scene, readings
 from placer.audit.placement import breach, spent
-from placer.audit.response import Answers
+from placer.audit.response import Answers, answers_of
 from placer.estate import Volume
 from placer.plan import Goal, Moment, Placed, Reason, Status, Use
 from placer.units import PPM
@@ -32,7 +32,7 @@ def goals(case: Case) -> Iterator[str]:
     stated = tuple(goal.name for goal in case.plan.goals)
     if stated != order:
         yield f"the plan states the goals {stated}, solved in order are {order}"
-    values = values_of(case, Answers(case))
+    values = values_of(case, answers_of(case))
     for goal in case.plan.goals:
         right = values.get(goal.name)
         if right is None:
@@ -134,7 +134,7 @@ def _binds(case: Case, use: Use, row: Reading) -> bool:
 
 def responses(case: Case) -> Iterator[str]:
     """Check that the responses stated are right, and the unknown are not stated."""
-    answers = Answers(case)
+    answers = answers_of(case)
     for name, placed in case.placed.items():
         volume = case.volumes[name]
         right = {
@@ -151,7 +151,7 @@ def responses(case: Case) -> Iterator[str]:
 
 def reasons(case: Case) -> Iterator[str]:
     """Check that every move has a reason, and the reason holds."""
-    answers = Answers(case)
+    answers = answers_of(case)
     sore = _Sore(case)
     for name, placed in case.placed.items():
         volume = case.volumes[name]

@@ -19,7 +19,7 @@ from placer.units import MILLI, PPM
 class Moments:
     """Requests of one kind: their number, bytes and squares of bytes, each per time.
 
-    They are whole numbers of fine parts, so that sums over volumes stay exact and quick.
+    They are whole numbers of fine parts: sums over volumes stay exact and quick.
     """
 
     number: int = 0
@@ -64,12 +64,16 @@ def mean_square(volume: Volume, mean: Fraction) -> Fraction:
     Part of them may be large: then the others are as small as the mean asks.  Where
     none are left, or no size is known, all are alike.
     """
-    share = Fraction(volume.large_share, PPM)
-    if not 0 < share < 1 or not volume.large_size:
-        return mean**2
-    large = min(Fraction(volume.large_size), mean / share)
-    small = (mean - share * large) / (1 - share)
-    return share * large**2 + (1 - share) * small**2
+    size, number = mean.as_integer_ratio()
+    share, large = volume.large_share, volume.large_size * number
+    if not 0 < share < PPM or not large:
+        return Fraction(size**2, number**2)
+    others = PPM * size - share * large
+    if others <= 0:
+        return Fraction(PPM * size**2, share * number**2)
+    alike = PPM - share
+    squares = share * alike * large**2 + others**2
+    return Fraction(squares, PPM * alike * number**2)
 
 
 def of_hosts(volume: Volume, load: Load, counted: Sequence[int]) -> tuple[Moments, ...]:

@@ -5,7 +5,7 @@ The wait is that behind all requests at the drives, whoever's they are.
 
 from collections.abc import Mapping
 from fractions import Fraction
-from functools import cached_property
+from functools import cached_property, lru_cache
 from math import ceil
 
 from placer.audit import limits, machines
@@ -194,3 +194,9 @@ class Answers:
         if target == volume.home and volume.response_measured:
             return volume.response_measured
         return self._served(volume, target, self._then)
+
+
+@lru_cache(maxsize=1)
+def answers_of(case: Case) -> Answers:
+    """Return the responses of a case, the same for all rules that ask in turn."""
+    return Answers(case)
