@@ -85,6 +85,7 @@ def read_policy(row: Row, start: date) -> Policy:
         nights_kept_free=row.whole("nights kept free"),
         cutover_minutes=row.whole("cutover, check and back-out"),
         cutover_counts_as=row.whole("one cutover counts as"),
+        latent_demand=row.whole("latent demand"),
         seed=row.whole("seed"),
         time_limit=row.whole("time limit"),
     )

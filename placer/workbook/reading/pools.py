@@ -61,6 +61,7 @@ def _pool(row: Row, names: Names) -> Pool:
         name=row.text("pool"),
         media=media,
         in_place=not row.given("writes in place") or row.switch("writes in place"),
+        one_drive_lost=row.values.get("plan for a lost drive") is True,
         expansion=_expansion(row),
         place=row.place("pool"),
         **numbers,
@@ -68,6 +69,7 @@ def _pool(row: Row, names: Names) -> Pool:
     if row.given("array") and row.given("pool"):
         names.add(pool.id, row.place("pool"))
     _assume_in_place(row, pool)
+    _check_lost_drive(row, pool)
     _check_room(row, pool)
     return pool
 
@@ -102,6 +104,21 @@ def _assume_in_place(row: Row, pool: Pool) -> None:
     matters = pool.parity > 0 and pool.data > 1 and not pool.requests_at_most
     if matters and not row.given("writes in place"):
         row.assume("writes in place")
+
+
+def _check_lost_drive(row: Row, pool: Pool) -> None:
+    """Say that all drives are taken to work; or that a lost one cannot be counted."""
+    counted = pool.takes_volumes and pool.parity > 0 and not pool.requests_at_most
+    if counted and not row.given("plan for a lost drive"):
+        row.assume("plan for a lost drive")
+    if pool.one_drive_lost and not counted and not row.faulty:
+        row.remarks.warn(
+            "lost-drive",
+            row.place("plan for a lost drive"),
+            f"a lost drive of {pool.id} cannot be counted: its drives or its parity "
+            "are not known",
+            "fill in data and parity per stripe and the drives, or write no",
+        )
 
 
 def _expansion(row: Row) -> Expansion | None:

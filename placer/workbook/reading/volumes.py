@@ -19,6 +19,12 @@ class Sizes:
     read: Fraction
     write: Fraction
 
+    def mean(self, reads: Fraction, writes: Fraction) -> Fraction:
+        """Return the mean size [B] of so many reads and writes; 0 without any."""
+        requests = reads + writes
+        size = reads * self.read + writes * self.write
+        return size / requests if requests else Fraction(0)
+
     def load(self, reads: Fraction, writes: Fraction) -> Load:
         """Return the load of so many reads and writes [1/1000 s]."""
         return Load(
@@ -84,6 +90,7 @@ class VolumeReader:
         of_class = self._classes.get(row.text("class"))
         sizes = _sizes(row)
         reads = row.exact("requests") * row.exact("reads") / PPM
+        writes = row.exact("requests") - reads
         volume = Volume(
             array=row.text("array"),
             name=row.text("volume"),
@@ -91,12 +98,14 @@ class VolumeReader:
             provisioned=row.whole("provisioned"),
             occupied=row.whole("occupied"),
             thin=row.switch("thin"),
-            load=(sizes.load(reads, row.exact("requests") - reads),),
+            load=(sizes.load(reads, writes),),
             host=row.text("host"),
             applications=row.names("application"),
             tenant=row.text("tenant"),
             random_reads=row.whole("random reads"),
             read_hits=row.whole("read hits"),
+            large_share=row.whole("large share"),
+            large_size=row.whole("large size"),
             snapshots=row.whole("snapshots"),
             snapshot_days=_snapshot_days(row),
             service_class=row.text("class"),
@@ -110,6 +119,7 @@ class VolumeReader:
             place=row.place("volume"),
         )
         self._check(row, volume)
+        _check_large(row, sizes.mean(reads, writes))
         return Measured(volume, sizes, row)
 
     def _hold(self, of_class: Row | None) -> int:
@@ -158,6 +168,35 @@ def _size(row: Row, column: str, mean: Fraction) -> Fraction:
         return row.exact(column)
     row.assume(column)
     return mean
+
+
+def _check_large(row: Row, mean: Fraction) -> None:
+    """Hold the large requests against each other and the mean of all [B]."""
+    share, size = row.exact("large share") / PPM, row.exact("large size")
+    if row.faulty or (not share and not size):
+        return
+    if not share or not size:
+        row.error(
+            "blank",
+            "large size" if share else "large share",
+            "large share and large size belong together, but only one is filled in",
+            "fill in both, or neither",
+        )
+    elif size < mean:
+        row.error(
+            "bounds",
+            "large size",
+            f"large requests are smaller than the mean, {float(mean / KIB):g} KiB",
+            "check large size, requests and throughput, and their units",
+        )
+    elif mean and share * size > mean:
+        row.remarks.warn(
+            "size",
+            row.place("large share"),
+            "large requests alone are more than the throughput; they count as large "
+            "as it allows",
+            "check large share, large size, requests and throughput",
+        )
 
 
 def _measured(row: Row) -> int:

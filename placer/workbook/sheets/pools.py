@@ -113,6 +113,13 @@ _PROTECTION = (
         meaning="yes: a small write updates parity; no: whole stripes are written",
     ),
     Column(
+        name="plan for a lost drive",
+        kind=Kind.SWITCH,
+        default="no",
+        effect=Effect.BUSY,
+        meaning="yes: the busy ceiling must hold in a group that lost one drive",
+    ),
+    Column(
         name="busy ceiling",
         kind=Kind.PERCENT,
         unit="%",

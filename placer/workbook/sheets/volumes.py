@@ -174,6 +174,28 @@ VOLUMES = Sheet(
             meaning="share of the reads answered from the cache of its array today",
         ),
         Column(
+            name="large share",
+            kind=Kind.PERCENT,
+            unit="%",
+            default="0",
+            side=Side.DEMAND,
+            highest=100,
+            effect=Effect.RESPONSE,
+            meaning="share of all requests that have the large size; the rest keeps "
+            "the mean",
+        ),
+        Column(
+            name="large size",
+            kind=Kind.NUMBER,
+            unit="KiB",
+            default="none",
+            derived=True,
+            side=Side.DEMAND,
+            highest=65536,
+            effect=Effect.RESPONSE,
+            meaning="size of the large requests; both, or neither, are filled in",
+        ),
+        Column(
             name="response measured",
             kind=Kind.NUMBER,
             unit="ms",

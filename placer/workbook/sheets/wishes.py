@@ -303,6 +303,17 @@ SETTINGS = (
         meaning="effort of one cutover, in GiB copied",
     ),
     Column(
+        name="latent demand",
+        kind=Kind.RATIO,
+        default="1.5",
+        side=Side.DEMAND,
+        lowest=1,
+        highest=5,
+        effect=Effect.BUSY,
+        meaning="load on flash over the load measured, where spinning drives could "
+        "not serve more",
+    ),
+    Column(
         name=GB_MEANS,
         kind=Kind.WORD,
         words=("10^9", "2^30"),

@@ -48,6 +48,7 @@ def test_every_setting_is_read(tmp_path: Path) -> None:
             ["nights kept free (%)", 10],
             ["cutover, check and back-out (min)", 90],
             ["one cutover counts as (GiB)", 2.5],
+            ["latent demand", 1.25],
             ["seed", 7],
             ["time limit (s)", 30],
         ),
@@ -69,6 +70,7 @@ def test_every_setting_is_read(tmp_path: Path) -> None:
         nights_kept_free=100_000,
         cutover_minutes=90,
         cutover_counts_as=int(2.5 * GIB),
+        latent_demand=1_250_000,
         seed=7,
         time_limit=30,
     )
@@ -100,6 +102,8 @@ def test_an_unknown_setting_is_a_note(tmp_path: Path) -> None:
         ("finish by", "2026-03-01", "date"),
         ("hold (days)", 1.5, "cell"),
         ("time limit (s)", 0, "bounds"),
+        ("latent demand", 0.9, "bounds"),
+        ("latent demand", 5.1, "bounds"),
     ],
 )
 def test_a_wrong_value_is_one_error_at_its_cell(

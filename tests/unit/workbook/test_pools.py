@@ -192,3 +192,32 @@ def test_what_would_divide_by_nothing_or_undo_a_load_is_refused(
 def test_a_factor_under_one_is_as_good_as_one_over_it(tmp_path: Path) -> None:
     cells: dict[str, object] = {"usable (GiB)": 500, "measured factor": 0.7}
     assert pool(tmp_path, "flash", **cells).measured_factor == 700_000
+
+
+PLAN = "plan for a lost drive"
+GROUP: dict[str, object] = {
+    "usable (GiB)": 500,
+    "data per stripe": 5,
+    "parity per stripe": 1,
+}
+
+
+def test_a_pool_is_planned_for_a_lost_drive_only_where_asked(tmp_path: Path) -> None:
+    for typed, meant, assumed in (("yes", True, 0), ("no", False, 0), (None, False, 1)):
+        found, assumptions = _pool(tmp_path, "flash", GROUP | {PLAN: typed})
+        assert found.one_drive_lost is meant
+        said = [(a.value, a.cells) for a in assumptions if a.column == PLAN]
+        assert said == [("no", 1)] * assumed
+
+
+@pytest.mark.parametrize(
+    "cells", [{"parity per stripe": 0}, {"requests at most (1/s)": 20_000}]
+)
+def test_a_lost_drive_that_cannot_be_counted_is_said(
+    tmp_path: Path, cells: dict[str, object]
+) -> None:
+    sheets = with_pool(**(GROUP | {PLAN: "yes"} | cells))
+    sheets["pools"][3][2] = "flash"
+    found = intake(tmp_path, sheets)
+    assert found.estate is not None
+    assert [(f.severity, f.code) for f in found.findings] == [("warning", "lost-drive")]

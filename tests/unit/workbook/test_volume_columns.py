@@ -6,7 +6,7 @@ import pytest
 from sheetfiles import estate, intake, least, only_error
 
 from placer.estate import Volume
-from placer.units import GIB
+from placer.units import GIB, KIB, MIB
 
 Sheets = dict[str, list[list[object]]]
 EFFECT = "decides how much load a pool or an array carries"
@@ -80,6 +80,48 @@ def test_a_share_above_all_or_without_its_sign_is_asked(
 ) -> None:
     error = only_error(intake(tmp_path, with_columns(**{column: typed})))
     assert (error.code, error.place.cell) == (code, "I2")
+
+
+def test_large_requests_are_a_share_and_a_size(tmp_path: Path) -> None:
+    found = volume(tmp_path, **{"large share (%)": "2.5%", "large size (KiB)": 256})
+    assert (found.large_share, found.large_size) == (25_000, 256 * KIB)
+    plain = volume(tmp_path)
+    assert (plain.large_share, plain.large_size) == (0, 0)
+
+
+def test_large_size_may_be_in_mib(tmp_path: Path) -> None:
+    found = volume(tmp_path, **{"large share (%)": "1%", "large size (MiB)": 1})
+    assert found.large_size == MIB
+
+
+@pytest.mark.parametrize(
+    ("share", "size", "cell"),
+    [("5%", None, "J2"), (None, 256, "I2"), (0, 256, "I2"), ("5%", 0, "J2")],
+)
+def test_a_large_share_needs_a_large_size_and_the_other_way_round(
+    tmp_path: Path, share: object, size: object, cell: str
+) -> None:
+    sheets = with_columns(**{"large share (%)": share, "large size (KiB)": size})
+    error = only_error(intake(tmp_path, sheets))
+    assert (error.code, error.place.cell) == ("blank", cell)
+
+
+def test_large_requests_are_not_below_the_mean(tmp_path: Path) -> None:
+    """24.5 MB/s in 1500 requests/s are 15.95 KiB each."""
+    for size, there in ((15, 1), (16, 0)):
+        sheets = with_columns(**{"large share (%)": "5%", "large size (KiB)": size})
+        found = intake(tmp_path, sheets).findings
+        assert [(f.code, f.place.cell) for f in found] == [("bounds", "J2")] * there
+
+
+def test_large_requests_above_the_throughput_are_said(tmp_path: Path) -> None:
+    """10 % of 160 KiB are 16 KiB, of 15.95 KiB in the mean; 9 % are 14.4 KiB."""
+    for share, there in ((10, 1), (9, 0)):
+        sheets = with_columns(**{"large share (%)": share, "large size (KiB)": 160})
+        found = intake(tmp_path, sheets)
+        assert found.estate is not None
+        said = [(f.severity, f.code, f.place.cell) for f in found.findings]
+        assert said == [("warning", "size", "I2")] * there
 
 
 @pytest.mark.parametrize("typed", [-1, 2.5, "a week"])
