@@ -5,7 +5,8 @@ from functools import cached_property
 
 from placer.audit.caches import Caches
 from placer.audit.demand import Demand, demand_at, months_of_nights
-from placer.estate import Array, Estate, Route, Volume, Window
+from placer.audit.latent import saturated
+from placer.estate import Array, Estate, Media, Route, Volume, Window
 from placer.plan import Booking, Move, Placed, Plan
 
 
@@ -43,6 +44,11 @@ class Case:
     def caches(self) -> Caches:
         """The caches of the arrays."""
         return Caches(self.estate)
+
+    @cached_property
+    def saturated(self) -> frozenset[str]:
+        """Pools whose volumes would ask for more, were they served by flash."""
+        return saturated(self.estate, self.caches, self.today)
 
     @cached_property
     def placed(self) -> dict[str, Placed]:
@@ -127,6 +133,11 @@ class Case:
         ]
         listed = {(r.source, r.target): r for r in reversed(self.estate.routes)}
         return next((listed[pair] for pair in ends if pair in listed), None)
+
+    def held_back(self, volume: Volume, pool: str) -> bool:
+        """Whether a volume asks more in a pool than its saturated home could serve."""
+        flash = self.pools[pool].media is Media.FLASH
+        return flash and volume.home in self.saturated
 
     def members(self, where: Mapping[str, str]) -> dict[str, list[Volume]]:
         """Return the volumes that stand in each pool."""

@@ -10,9 +10,11 @@ from dataclasses import dataclass
 from fractions import Fraction
 from math import floor
 
+from placer.audit import busy as drives
 from placer.audit import machines
 from placer.audit.case import Case
-from placer.audit.demand import GRAIN, Demand
+from placer.audit.demand import GRAIN, Demand, swollen
+from placer.audit.groups import all_drives
 from placer.estate import Array, Pool, Volume
 from placer.units import GIB, PERCENT, PPM, SECONDS_PER_DAY, TB
 
@@ -22,12 +24,12 @@ SLACK = Fraction(1, 10**9)
 
 @dataclass(frozen=True, slots=True)
 class Gauge:
-    """One limit at one place: what a volume adds, and the meaning of the sum."""
+    """One limit at one place: what a volume adds in a pool, and what the sum means."""
 
     code: str
     where: str
     unit: str
-    adds: Callable[[Volume], Sequence[int]]
+    adds: Callable[[Volume, str], Sequence[int]]
     worth: Fraction
     at_most: Fraction
     hourly: bool = False
@@ -67,16 +69,27 @@ class Reading:
 
 @dataclass(frozen=True, slots=True)
 class Scene:
-    """A placement at a date with some steps bought."""
+    """A placement at a date with some steps bought.
+
+    With ``latent`` volumes ask for what a saturated home could not serve.
+    """
 
     case: Case
     demand: Demand
     where: Mapping[str, str]
     steps: Mapping[str, int]
+    latent: bool = True
 
     def bought(self, pool: Pool) -> int:
         """Return the steps bought of a pool."""
         return self.steps.get(pool.id, 0)
+
+    def load(self, volume: Volume, pool: str) -> Sequence[int]:
+        """Return what a volume asks for in a pool: 4 parts of each hour [GRAIN]."""
+        asked = self.demand.loads[volume.id]
+        if not self.latent or not self.case.held_back(volume, pool):
+            return asked
+        return swollen(asked, self.case.estate.policy.latent_demand)
 
 
 def room(scene: Scene, pool: Pool) -> Gauge:
@@ -85,7 +98,7 @@ def room(scene: Scene, pool: Pool) -> Gauge:
         "pool-room",
         pool.id,
         "GiB",
-        lambda volume: (scene.demand.sizes[volume.id] + volume.snapshots,),
+        lambda volume, _: (scene.demand.sizes[volume.id] + volume.snapshots,),
         Fraction(PPM, pool.reduction * GIB),
         machines.room(pool, scene.bought(pool)) / GIB,
     )
@@ -100,7 +113,7 @@ def thin(scene: Scene, pool: Pool) -> Gauge | None:
         "pool-thin",
         pool.id,
         "GiB",
-        lambda volume: (volume.provisioned,),
+        lambda volume, _: (volume.provisioned,),
         Fraction(1, GIB),
         whole * pool.thin_at_most / PPM / GIB,
     )
@@ -108,22 +121,15 @@ def thin(scene: Scene, pool: Pool) -> Gauge | None:
 
 def busy(scene: Scene, pool: Pool) -> Gauge | None:
     """Busy share of the drives of a pool, hour by hour, by the reads no cache has."""
-    caches = scene.case.caches
-    work = machines.busy_work(pool, caches.whole)
-    over = machines.servers(pool, scene.bought(pool))
-    if work is None or not over:
+    at_work = drives.busy(pool, scene.bought(pool), scene.case.caches)
+    if at_work is None:
         return None
-
-    def adds(volume: Volume) -> list[int]:
-        form = work.form(volume.random_reads, caches.misses(volume, pool.array))
-        return form.of(scene.demand.loads[volume.id])
-
     return Gauge(
         "pool-busy",
         pool.id,
         "%",
-        adds,
-        Fraction(100, work.unit * GRAIN) / over,
+        lambda volume, where: at_work.adds(volume, scene.load(volume, where)),
+        100 * at_work.worth,
         Fraction(pool.busy_ceiling, PERCENT),
         hourly=True,
     )
@@ -135,11 +141,10 @@ def wear(scene: Scene, pool: Pool) -> Gauge | None:
         return None
     hours = len(scene.case.estate.hours)
     lasts = SECONDS_PER_DAY * pool.life_days
-    _, writes = machines.back_end(pool)
+    writes = int(all_drives(pool).writes * pool.data)
 
-    def adds(volume: Volume) -> tuple[int]:
-        each_hour = scene.demand.loads[volume.id][3::4]
-        hosts = sum(each_hour) * lasts * int(writes * pool.data)
+    def adds(volume: Volume, where: str) -> tuple[int]:
+        hosts = sum(scene.load(volume, where)[3::4]) * lasts * writes
         if volume.home == pool.id:
             return (hosts,)
         copied = scene.case.nights.sizes[volume.id] * (pool.data + pool.parity)
@@ -162,7 +167,7 @@ def controllers(scene: Scene, array: Array) -> Gauge:
         "controller-busy",
         array.name,
         "%",
-        lambda volume: form.of(scene.demand.loads[volume.id]),
+        lambda volume, where: form.of(scene.load(volume, where)),
         Fraction(100, form.unit * GRAIN),
         Fraction(array.controller_ceiling, PERCENT),
         hourly=True,
@@ -175,7 +180,7 @@ def volumes(_: Scene, array: Array) -> Gauge | None:
         return None
     most = Fraction(array.volumes_at_most)
     one = Fraction(1)
-    return Gauge("array-volumes", array.name, "volumes", lambda _: (1,), one, most)
+    return Gauge("array-volumes", array.name, "volumes", lambda *_: (1,), one, most)
 
 
 def hosts(scene: Scene, array: Array) -> Reading | None:
@@ -211,7 +216,7 @@ def readings(scene: Scene, code: str) -> Iterator[Reading]:
         yield from (row for row in rows if row is not None)
     standing = scene.case.members(scene.where)
     for gauge, pools in gauges(scene, code):
-        there = (volume for pool in pools for volume in standing[pool])
+        there = ((volume, pool) for pool in pools for volume in standing[pool])
         yield reading(scene, gauge, added(gauge, there))
 
 
@@ -229,11 +234,11 @@ def gauges(scene: Scene, code: str) -> Iterator[tuple[Gauge, tuple[str, ...]]]:
                 yield at_array, tuple(covered)
 
 
-def added(gauge: Gauge, members: Iterator[Volume]) -> list[int]:
-    """Return the sum of what volumes add, hour by hour; [] for no volumes."""
+def added(gauge: Gauge, members: Iterator[tuple[Volume, str]]) -> list[int]:
+    """Return the sum of what volumes add in pools, hour by hour; [] for no volumes."""
     total: Sequence[int] = []
-    for volume in members:
-        total = plus(total, gauge.adds(volume))
+    for volume, pool in members:
+        total = plus(total, gauge.adds(volume, pool))
     return list(total)
 
 

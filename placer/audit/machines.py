@@ -6,6 +6,7 @@ from enum import Enum
 from fractions import Fraction
 from math import lcm
 
+from placer.audit.groups import Counts, planned_for
 from placer.estate import Array, Media, Pool
 from placer.units import MILLI, PPM
 
@@ -23,7 +24,7 @@ class Form:
     write_bytes: int
     unit: int
 
-    def of(self, load: tuple[int, ...]) -> list[int]:
+    def of(self, load: Sequence[int]) -> list[int]:
         """Return what a load (4 parts of each hour in turn) adds in each hour."""
         return [
             reads * self.reads
@@ -117,22 +118,6 @@ def room(pool: Pool, steps: int) -> Fraction:
     return min(whole * pool.fill_ceiling / PPM, whole - pool.least_free)
 
 
-def back_end(pool: Pool) -> tuple[Fraction, Fraction]:
-    """Return the reads and writes of drives that one host write causes."""
-    if pool.data == pool.parity == 1:
-        return Fraction(0), Fraction(2)
-    if not pool.parity:
-        return Fraction(0), Fraction(1)
-    if pool.in_place:
-        return Fraction(pool.parity + 1), Fraction(pool.parity + 1)
-    return Fraction(0), whole_stripes(pool)
-
-
-def whole_stripes(pool: Pool) -> Fraction:
-    """Return the writes of drives per byte written in whole stripes."""
-    return Fraction(pool.data + pool.parity, pool.data)
-
-
 def half_turn(pool: Pool) -> Fraction:
     """Return the time of half a turn [µs]; 0 where the speed is not known."""
     return per(HALF_TURN, pool.rpm)
@@ -175,39 +160,46 @@ def _parts(pool: Pool) -> list[Fraction]:
         share = Fraction(1, pool.requests_at_most)
         return [share] * len(Kind) + [Fraction(0)] * len(Kind)
     requests, moved = (dict.fromkeys(Kind, Fraction(0)) for _ in range(2))
-    for hold in holds(pool):
+    for hold in holds(pool, planned_for(pool)):
         requests[hold.kind] += hold.times * hold.once / (PPM * MILLI)
         moved[hold.kind] += hold.times * hold.each_byte / PPM
     return [part * pool.skew / PPM for part in (*requests.values(), *moved.values())]
 
 
-def holds(pool: Pool) -> tuple[Hold, ...]:
-    """Return how requests occupy the drives of a pool of flash or spinning drives."""
-    return _flash(pool) if pool.media is Media.FLASH else _spinning(pool)
+def holds(pool: Pool, counts: Counts) -> tuple[Hold, ...]:
+    """Return how requests occupy the drives of a pool of flash or spinning drives.
+
+    Parameters
+    ----------
+    pool
+        The pool.
+    counts
+        [1] requests to drives that one of a host causes there.
+    """
+    work = _flash if pool.media is Media.FLASH else _spinning
+    return work(pool, counts)
 
 
-def _flash(pool: Pool) -> tuple[Hold, ...]:
-    back_reads, back_writes = back_end(pool)
+def _flash(pool: Pool, counts: Counts) -> tuple[Hold, ...]:
     read, write = (
         per(PPM * MILLI, rating) for rating in (pool.reads_at_most, pool.writes_at_most)
     )
     byte = per(PPM, pool.drive_rate)
     return (
-        Hold(Kind.RANDOM, Fraction(1), read, byte),
-        Hold(Kind.SEQUENTIAL, Fraction(1), read, byte),
-        Hold(Kind.WRITE, back_reads, read, byte),
-        Hold(Kind.WRITE, back_writes, write, byte),
+        Hold(Kind.RANDOM, counts.reads, read, byte),
+        Hold(Kind.SEQUENTIAL, counts.reads, read, byte),
+        Hold(Kind.WRITE, counts.write_reads, read, byte),
+        Hold(Kind.WRITE, counts.writes, write, byte),
     )
 
 
-def _spinning(pool: Pool) -> tuple[Hold, ...]:
-    touched = sum(back_end(pool), start=Fraction(0))
+def _spinning(pool: Pool, counts: Counts) -> tuple[Hold, ...]:
     once, byte = positioning(pool), per(PPM, pool.drive_rate)
     fetched = byte + positions(pool) * once
     return (
-        Hold(Kind.RANDOM, Fraction(1), once, byte),
-        Hold(Kind.SEQUENTIAL, Fraction(1), Fraction(0), fetched),
-        Hold(Kind.WRITE, touched, once, byte),
+        Hold(Kind.RANDOM, counts.reads, once, byte),
+        Hold(Kind.SEQUENTIAL, counts.reads, Fraction(0), fetched),
+        Hold(Kind.WRITE, counts.write_reads + counts.writes, once, byte),
     )
 
 

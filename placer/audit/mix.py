@@ -10,6 +10,7 @@ from fractions import Fraction
 from math import ceil
 
 from placer.audit import machines
+from placer.audit.groups import all_drives
 from placer.audit.machines import Hold, Kind
 from placer.estate import Load, Pool, Volume
 from placer.units import MILLI, PPM
@@ -121,12 +122,14 @@ def together(mixes: Iterable[Mix]) -> Mix:
 def residual(pool: Pool, mix: Mix) -> Fraction:
     """Return the mean of what is left of the request in service [µs]; 0 for none.
 
+    Requests are those of a group with all its drives.
+
     References
     ----------
     Mean residual life, E[S^2] / (2 E[S]): Pollaczek-Khinchine, R. Cooper, Introduction
     to Queueing Theory, 2nd edition 1981, p. 189.
     """
-    holds = machines.holds(pool)
+    holds = machines.holds(pool, all_drives(pool))
     held = sum(mix[hold.kind].held(hold) for hold in holds)
     squared = sum(mix[hold.kind].held_squared(hold) for hold in holds)
     return Fraction(squared, 2 * held) if held else Fraction(0)

@@ -63,7 +63,7 @@ def spans(case: Case, code: str) -> Iterator[Span]:
     after = Scene(case, case.nights, case.homes, case.steps)
     sooner = {gauge.where: gauge for gauge, _ in gauges(before, code)}
     for gauge, pools in gauges(after, code):
-        there = (volume for pool in pools for volume in standing[pool])
+        there = ((volume, pool) for pool in pools for volume in standing[pool])
         start = added(gauge, there)
         changes = _changes(case, gauge, pools)
         yield from _walk(case, start, changes, (sooner.get(gauge.where), gauge))
@@ -107,7 +107,8 @@ def _walk(
             today = start or [0] * len(total)
             yield Span(since, until, gauge, total, today)
         for sign, move in changes.get(until, ()):
-            total = plus(total, after.adds(case.volumes[move.volume]), sign)
+            where = move.target if sign > 0 else move.source
+            total = plus(total, after.adds(case.volumes[move.volume], where), sign)
         since = until
 
 

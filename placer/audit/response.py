@@ -124,7 +124,7 @@ class Drives:
         where: Mapping[str, str],
         steps: Mapping[str, int],
     ) -> None:
-        scene = limits.Scene(case, case.today, where, steps)
+        scene = limits.Scene(case, case.today, where, steps, latent=False)
         rows = limits.readings(scene, "pool-busy")
         self._asked = asked
         self._standing = case.members(where)

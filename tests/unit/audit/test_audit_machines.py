@@ -6,7 +6,8 @@ from typing import Any
 
 import pytest
 
-from placer.audit import machines
+from placer.audit import groups, machines
+from placer.audit.groups import Counts
 from placer.audit.machines import Form
 from placer.estate import Array, Expansion, Media, Pool
 from placer.units import GB, GIB, KIB, MB, MIB, MILLI, PPM, TB
@@ -75,7 +76,7 @@ def test_whole_stripes_write_each_block_and_its_part_of_the_parity() -> None:
     pool = Pool(
         array="a", name="p", media=Media.FLASH, data=4, parity=1, in_place=False
     )
-    assert machines.back_end(pool) == (Fraction(0), Fraction(5, 4))
+    assert groups.all_drives(pool) == Counts(Fraction(1), Fraction(0), Fraction(5, 4))
 
 
 def test_bytes_go_with_the_requests_to_drives() -> None:
