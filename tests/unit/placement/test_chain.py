@@ -96,3 +96,16 @@ def test_columns_that_cannot_pay_are_left_out() -> None:
     relaxed = solver.relax(builder.build(), cost)
     assert relaxed is not None
     assert list(worthwhile(relaxed, 5.0, np.array([1.0, 0, 0]))) == [0, 2]
+
+
+def test_a_worse_solution_is_never_taken(monkeypatch: pytest.MonkeyPatch) -> None:
+    """Whatever a solver comes back with, what was known is kept."""
+    seed = POSSIBLE[0]
+    links, possible = chain(seed, free=200), solutions(program(seed))
+    best = possible[(possible @ links.cost).argmin()]
+
+    def poor(*_: object, **__: object) -> solver.Answer:
+        return solver.Answer(worst(seed), FAR, proven=True, impossible=False)
+
+    monkeypatch.setattr(solver, "solve", poor)
+    assert links.improve(best, time.monotonic() + 10, FAR) is best
