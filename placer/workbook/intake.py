@@ -71,7 +71,7 @@ def read(path: Path, today: date | None = None) -> Intake:
     """
     remarks = Remarks()
     sheets = read_source(path, remarks)
-    if not sheets:
+    if not any(each.readable for each in sheets):
         return Intake(None, remarks.findings, ())
     raw = _by_name(sheets, remarks)
     settings, gb = read_settings(raw.get("policy"), sheet("policy"), remarks)
@@ -117,7 +117,8 @@ def _say_not_used(raw: RawSheet, known: Iterable[str], remarks: Remarks) -> None
 def _say_empty(raw: Mapping[str, RawSheet], tables: Tables, remarks: Remarks) -> None:
     """Say which sheets are there, as they must be, but hold nothing."""
     for each in SHEETS:
-        if each.required and each.name in raw and not tables[each.name]:
+        read_empty = each.name in raw and raw[each.name].readable
+        if each.required and read_empty and not tables[each.name]:
             remarks.error(
                 "sheet",
                 Place(each.name),
@@ -170,9 +171,8 @@ class _Machines:
 
 
 def _machines(tables: Tables, remarks: Remarks) -> _Machines:
-    pool_names, array_names, host_names = (
-        Names(noun, remarks) for noun in ("pool", "array", "host")
-    )
+    pool_names = Names("pool", remarks, needed=True)
+    array_names, host_names = Names("array", remarks), Names("host", remarks)
     pools = read_pools(tables["pools"], pool_names)
     named = [
         (row.text("array"), row.place("array"))
@@ -199,7 +199,8 @@ class _Demand:
 def _demand(
     tables: Tables, machines: _Machines, policy: Policy, clock: Clock, remarks: Remarks
 ) -> _Demand:
-    class_names, volume_names = Names("class", remarks), Names("volume", remarks)
+    class_names = Names("class", remarks)
+    volume_names = Names("volume", remarks, needed=True)
     reader = VolumeReader(
         volume_names,
         machines.pool_names,

@@ -16,10 +16,21 @@ class Names:
         What the names are names of, for the sentences.
     known
         Names that are known from the start; they are not checked again.
+    needed
+        Whether having no names at all is a fault said elsewhere: then no single name
+        is at fault.
     """
 
-    def __init__(self, noun: str, remarks: Remarks, known: Iterable[str] = ()) -> None:
+    def __init__(
+        self,
+        noun: str,
+        remarks: Remarks,
+        known: Iterable[str] = (),
+        *,
+        needed: bool = False,
+    ) -> None:
         self._noun = noun
+        self._needed = needed
         self._remarks = remarks
         self._places = dict.fromkeys(known, Place())
         self._folded = {_folded(name): name for name in self._places}
@@ -55,6 +66,8 @@ class Names:
         """Return whether a name is known; one that is not is an error."""
         if name in self._places:
             return True
+        if self._needed and not self._places:
+            return False
         twin = self._folded.get(_folded(name))
         if twin:
             self._say_twin(name, twin, place)

@@ -13,7 +13,7 @@ _ROOM = {
     "usable before reduction": "usable",
     "fill ceiling": "fill_ceiling",
     "least free": "least_free",
-    "provisioned ÷ usable at most": "thin_at_most",
+    "provisioned / usable at most": "thin_at_most",
     "reduction here": "reduction",
     "requests at most": "requests_at_most",
 }

@@ -44,7 +44,11 @@ class Cell:
 
 @dataclass(frozen=True, slots=True)
 class RawSheet:
-    """A sheet: its name and its rows, all of one length; wholly blank ones may lack."""
+    """A sheet: its name and its rows, all of one length; wholly blank ones may lack.
+
+    One that is not readable has no rows, and a finding that says so.
+    """
 
     name: str
     rows: tuple[tuple[Cell, ...], ...]
+    readable: bool = True

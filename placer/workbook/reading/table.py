@@ -138,6 +138,8 @@ def read_table(
     if raw is None:
         _say_no_sheet(sheet, remarks)
         return ()
+    if not raw.readable:
+        return ()
     start = heading_row(raw.rows, sheet.columns)
     if start is None:
         _say_no_headings(raw, sheet, remarks)

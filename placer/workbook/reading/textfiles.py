@@ -22,22 +22,50 @@ def read_folder(path: Path, remarks: Remarks) -> tuple[RawSheet, ...]:
             f"the folder {path.name} holds no CSV file",
             "put volumes.csv and pools.csv into it, or name a workbook",
         )
-    read = (_read_file(file, remarks) for file in files)
-    return tuple(sheet for sheet in read if sheet is not None)
+    return tuple(_read_file(file, remarks) for file in files)
 
 
-def _read_file(file: Path, remarks: Remarks) -> RawSheet | None:
+def _read_file(file: Path, remarks: Remarks) -> RawSheet:
     try:
-        text = file.read_text(encoding="utf-8-sig")
-        return _sheet(file.stem, text)
-    except (UnicodeDecodeError, csv.Error, OSError) as error:
+        return _sheet(file.stem, _text(file, remarks))
+    except (UnicodeDecodeError, csv.Error, OSError):
         remarks.error(
             "file",
             Place(file.stem),
-            f"{file.name} cannot be read as text: {error}",
-            "save it as CSV in UTF-8",
+            f"{file.name} cannot be read as text",
+            "save it again as CSV in UTF-8",
         )
-        return None
+        return RawSheet(file.stem, (), readable=False)
+
+
+def _text(file: Path, remarks: Remarks) -> str:
+    """Return the text of a file; what is no UTF-8 is read as Windows-1252.
+
+    Raises
+    ------
+    UnicodeDecodeError
+        It is neither.
+    csv.Error
+        It holds zero bytes, as text of two bytes per character does.
+    """
+    try:
+        text = file.read_text(encoding="utf-8-sig")
+    except UnicodeDecodeError:
+        text = file.read_text(encoding="cp1252")
+        if "\0" not in text:
+            _say_code_page(file, remarks)
+    if "\0" in text:
+        raise csv.Error
+    return text
+
+
+def _say_code_page(file: Path, remarks: Remarks) -> None:
+    remarks.note(
+        "code-page",
+        Place(file.stem),
+        f"{file.name} is not in UTF-8; it was read as Western text (Windows-1252)",
+        "check names with accents; where they are wrong, save it as CSV in UTF-8",
+    )
 
 
 def _sheet(name: str, text: str) -> RawSheet:

@@ -85,13 +85,13 @@ _PROTECTION = (
         meaning="room that stays free in any case",
     ),
     Column(
-        name="provisioned ÷ usable at most",
+        name="provisioned / usable at most",
         kind=Kind.RATIO,
         default=NOT_LIMITED,
         side=Side.SUPPLY,
         highest=1000,
         effect=Effect.ROOM,
-        synonyms=("provisioned / usable at most", "provisioned to usable at most"),
+        synonyms=("provisioned to usable at most",),
         meaning="how far thin volumes may promise more than there is",
     ),
     Column(

@@ -60,3 +60,8 @@ def test_every_sheet_needs_at_least_one_column(sheet: Sheet) -> None:
 def test_a_key_knows_no_case_blanks_punctuation_or_unit() -> None:
     assert key(" Drive-Size  [GB] ") == key("drive size") == "drivesize"
     assert key("provisioned ÷ usable at most") == "provisionedusableatmost"
+
+
+def test_every_heading_and_default_can_be_saved_in_any_code_page() -> None:
+    shown = [text for _, c in EVERY for text in (c.header, c.shown_default)]
+    assert [text for text in shown if not text.isascii()] == []

@@ -157,8 +157,9 @@ def _empty_folder(path: Path) -> Path:
 
 
 def _foreign_bytes(path: Path) -> Path:
+    """Byte 81 is no letter of Windows-1252, nor the first of one in UTF-8."""
     (path / "folder").mkdir()
-    (path / "folder" / "volumes.csv").write_bytes(b"array,volume\nK,caf\xe9\n")
+    (path / "folder" / "volumes.csv").write_bytes(b"array,volume\nK,caf\x81\n")
     return path / "folder"
 
 
@@ -241,3 +242,16 @@ def test_what_is_filled_in_is_no_assumption(tmp_path: Path) -> None:
     found = estate(tmp_path, sheets)
     assert [v.thin for v in found.volumes] == [True, False, True]
     assert [a.cells for a in found.assumptions if a.column == "thin"] == [1]
+
+
+@pytest.mark.parametrize("heads", [None, "kind"])
+def test_without_pools_only_their_sheet_is_at_fault(
+    tmp_path: Path, heads: str | None
+) -> None:
+    """No sheet, or one without the column of the names."""
+    sheets = least()
+    if heads is None:
+        del sheets["pools"]
+    else:
+        sheets["pools"][0][0] = heads
+    assert only_error(intake(tmp_path, sheets)).place.sheet == "pools"

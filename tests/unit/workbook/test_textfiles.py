@@ -3,7 +3,7 @@
 from pathlib import Path
 
 import pytest
-from sheetfiles import LEAST, TODAY, as_folder, least
+from sheetfiles import LEAST, TODAY, as_folder, least, only_error
 
 from placer.workbook.intake import read
 
@@ -58,3 +58,37 @@ def test_short_lines_are_filled_with_blanks(tmp_path: Path) -> None:
     assert {f.place.cell for f in found.findings} == {
         f"{column}5" for column in "CDEFGH"
     }
+
+
+def test_a_western_code_page_is_read_and_said(tmp_path: Path) -> None:
+    """Byte E9 is e with an acute accent in Windows-1252, and no UTF-8 here."""
+    folder = as_folder(tmp_path / "estate", LEAST)
+    file = folder / "volumes.csv"
+    text = file.read_text(encoding="utf-8").replace("web01", "caf\u00e9")
+    file.write_text(text, encoding="cp1252")
+    found = read(folder, TODAY)
+    assert found.estate is not None
+    assert found.estate.volumes[2].name == "caf\u00e9"
+    said = [(f.severity, f.code, f.place.sheet) for f in found.findings]
+    assert said == [("note", "code-page", "volumes")]
+
+
+@pytest.mark.parametrize("content", [b"\x81\xff", "array,volume".encode("utf-16")])
+def test_what_is_no_text_is_refused_in_plain_words(
+    tmp_path: Path, content: bytes
+) -> None:
+    folder = as_folder(tmp_path / "estate", LEAST)
+    (folder / "hosts.csv").write_bytes(content)
+    error = only_error(read(folder, TODAY))
+    assert (error.code, error.place.sheet) == ("file", "hosts")
+    assert "codec" not in error.sentence
+    assert "UTF-8" in error.remedy
+
+
+def test_volumes_are_not_blamed_for_pools_that_could_not_be_read(
+    tmp_path: Path,
+) -> None:
+    folder = as_folder(tmp_path / "estate", LEAST)
+    (folder / "pools.csv").write_bytes(b"\x81\xff")
+    error = only_error(read(folder, TODAY))
+    assert (error.code, error.place.sheet) == ("file", "pools")
