@@ -20,7 +20,7 @@ from placer.estate import (
     Volume,
     Window,
 )
-from placer.units import GIB
+from placer.units import GIB, KIB
 
 HOURS = (Hour(None, 9, "09:00"), Hour(None, 21, "21:00"))
 
@@ -72,6 +72,8 @@ def _volume(luck: random.Random, number: int, pools: tuple[Pool, ...]) -> Volume
         random_reads=luck.choice([1_000_000, 250_000]),
         read_hits=luck.choice([0, 0, 400_000]),
         snapshots=luck.choice([0, 0, 30 * GIB]),
+        large_share=luck.choice([0, 0, 50_000, 300_000]),
+        large_size=luck.choice([0, 4, 256, 1024]) * KIB,
     )
 
 
