@@ -122,12 +122,13 @@ class Column:
 
 @dataclass(frozen=True, slots=True, kw_only=True)
 class Sheet:
-    """One sheet of the inventory."""
+    """One sheet of the inventory; ``of_totals``: its rows are totals of others."""
 
     name: str
     meaning: str
     columns: tuple[Column, ...]
     required: bool = False
+    of_totals: bool = False
 
     def column(self, name: str) -> Column:
         """Return a column by its own name."""

@@ -13,6 +13,7 @@ from placer.workbook.reading.headings import Heading, Headings, heading_row
 from placer.workbook.reading.raw import Cell, RawSheet
 from placer.workbook.reading.remarks import Remarks
 from placer.workbook.reading.scales import own_scale
+from placer.workbook.reading.totalrows import without_totals
 from placer.workbook.reading.values import CellFaultError, Quantity, Value
 
 
@@ -146,7 +147,9 @@ def read_table(
         return ()
     headings = Headings(sheet.columns, remarks, gb).find(raw.rows[start])
     _say_missing(headings, sheet, raw, remarks)
-    body = [row for row in raw.rows[start + 1 :] if _filled(row)]
+    body: list[Sequence[Cell]] = [row for row in raw.rows[start + 1 :] if _filled(row)]
+    if not sheet.of_totals:
+        body = without_totals(body, headings, remarks)
     for heading in headings:
         if heading.column.kind is Kind.ID:
             _say_numbers([row[heading.index] for row in body], heading.column, remarks)

@@ -348,6 +348,7 @@ POLICY = Sheet(
 
 CONTROL = Sheet(
     name="control",
+    of_totals=True,
     meaning="totals from another source; they must agree with the volumes read",
     columns=(
         Column(
