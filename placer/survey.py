@@ -16,6 +16,7 @@ from placer.findings import Finding, Place, Severity
 from placer.physics import controllers, drives
 from placer.plan import Moment
 from placer.units import PPM
+from placer.words import LIMITS, figure
 
 
 def survey(candidates: Candidates) -> tuple[Finding, ...]:
@@ -140,8 +141,8 @@ def over_today(candidates: Candidates) -> Iterator[Finding]:
                 "over-limit-today",
                 Severity.WARNING,
                 _place(candidates, use.where),
-                f"{use.where} is over its limit {use.limit} today: "
-                f"{use.use:,.4g} of {use.at_most:,.4g} {use.unit}{when}",
+                f"{use.where} is over a limit today: {LIMITS[use.limit]} "
+                f"{figure(use.use)} of {figure(use.at_most)} {use.unit}{when}",
                 "the plan never lets it rise, and brings it under the limit",
             )
 

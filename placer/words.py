@@ -12,6 +12,15 @@ _TITLES = {
     "relief": "relief, waiting saved",
     "effort": "copying, cutovers counted as GiB",
 }
+LIMITS = {
+    "pool-room": "room",
+    "pool-thin": "room provisioned",
+    "pool-busy": "drives busy",
+    "pool-wear": "wear",
+    "controller-busy": "controllers busy",
+    "array-volumes": "volumes",
+    "array-hosts": "hosts",
+}
 _UNITS = {"steps": "steps of 10 %", "ms/s": "ms each second"}
 
 REASONS = {
@@ -55,7 +64,7 @@ def value(goal: Goal, currency: str = "") -> str:
         return "none"
     if goal.name == "money":
         return f"{goal.value / CENTS:,.2f} {currency}".rstrip()
-    return f"{_figure(goal.value)} {_UNITS.get(goal.unit, goal.unit)}".rstrip()
+    return f"{figure(goal.value)} {_UNITS.get(goal.unit, goal.unit)}".rstrip()
 
 
 def told(goal: Goal, currency: str = "") -> str:
@@ -63,7 +72,7 @@ def told(goal: Goal, currency: str = "") -> str:
     return f"{title(goal)}: {value(goal, currency)}, {gap(goal)}"
 
 
-def _figure(number: float) -> str:
+def figure(number: float) -> str:
     """Return a number with as many digits as anybody reads."""
     return f"{number:,.0f}" if abs(number) >= 1000 else f"{number:.4g}"
 

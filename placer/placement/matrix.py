@@ -127,10 +127,14 @@ def common_unit(values: Floats) -> float:
 
 @dataclass
 class Builder:
-    """Collects rows while a program is put together."""
+    """Collects rows while a program is put together.
+
+    Unless ``guarded``, limits are taken as they are: right for measuring overruns.
+    """
 
     columns: int
     choices: int
+    guarded: bool = True
     _keys: list[RowKey] = field(default_factory=list)
     _low: list[float] = field(default_factory=list)
     _high: list[float] = field(default_factory=list)
@@ -148,9 +152,10 @@ class Builder:
         Other limits are shrunk by more than the tolerance.
         """
         scale = max(abs(limit), float(np.abs(values).max(initial=0.0)), 1e-12)
-        unit, side = common_unit(values / scale), limit / scale
-        side = unit * np.floor(side / unit + ROUNDING) if unit else side * (1 - SHRINK)
-        self._add(key, columns, values / scale, -INFINITY, float(side))
+        side = limit / scale
+        if self.guarded:
+            side = _guarded(side, common_unit(values / scale))
+        self._add(key, columns, values / scale, -INFINITY, side)
 
     def equal(
         self, key: RowKey, columns: Sequence[int], values: Floats, to: float
@@ -187,3 +192,10 @@ class Builder:
         self._rows.append(np.full(len(columns), row))
         self._cols.append(np.asarray(columns, dtype=np.int64))
         self._values.append(np.asarray(values, dtype=float))
+
+
+def _guarded(side: float, unit: float) -> float:
+    """Return a side that solver tolerance cannot break."""
+    if unit:
+        return float(unit * np.floor(side / unit + ROUNDING))
+    return side * (1 - SHRINK)

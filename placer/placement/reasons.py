@@ -25,13 +25,13 @@ def _reason(
     volume = candidates.volumes[row]
     if pool == home:
         return Reason.STAYS
-    if volume.id in broken:
+    if volume.id in broken or home in strained:
         return Reason.CURE
     if candidates.missed[row, home] > candidates.missed[row, pool]:
         return Reason.LIMIT
     if candidates.relief[row, pool] > 0:
         return Reason.RELIEF
-    return Reason.CURE if home in strained else Reason.MAKE_ROOM
+    return Reason.MAKE_ROOM
 
 
 def _strained(candidates: Candidates) -> set[int]:

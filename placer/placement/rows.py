@@ -154,9 +154,9 @@ ROWS: tuple[Callable[[Builder, Layout], None], ...] = (
 )
 
 
-def program(layout: Layout) -> Program:
-    """Return the whole placement program."""
-    builder = Builder(layout.columns, len(layout.items.places))
+def program(layout: Layout, *, guarded: bool = True) -> Program:
+    """Return the whole placement program; unguarded for measuring overruns."""
+    builder = Builder(layout.columns, len(layout.items.places), guarded)
     for rows in ROWS:
         rows(builder, layout)
     return builder.build()

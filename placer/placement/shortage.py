@@ -18,7 +18,7 @@ from placer.placement.layout import Layout
 from placer.placement.matrix import Program, RowKey
 from placer.plan import Shortage
 from placer.units import GIB
-from placer.words import count
+from placer.words import count, figure
 
 SMALLEST = 1e-5
 REMEDIES = {
@@ -93,7 +93,7 @@ def contradiction() -> tuple[Shortage, ...]:
 
 def nearest(layout: Layout, seconds: float) -> Nearest | None:
     """Return the placement with the least sum of overruns, None if rules forbid all."""
-    program = rows.program(layout)
+    program = rows.program(layout, guarded=False)
     soft = np.array(
         [i for i, k in enumerate(program.keys) if _may_overrun(program, i, k)]
     )
@@ -118,7 +118,7 @@ def shortages(layout: Layout, found: Nearest) -> tuple[Shortage, ...]:
     """Word the overruns: for each limit and owner the hour that lacks most."""
     keys = rows.program(layout).keys
     worst: dict[tuple[str, str], tuple[int, float]] = {}
-    for row, share in sorted(found.short, key=lambda pair: pair[1]):
+    for row, share in sorted(found.short, key=lambda pair: (pair[1], -pair[0])):
         worst[keys[row].code, keys[row].owner] = (keys[row].hour, share)
     words = Words(layout, layout.places(found.x), layout.bought(found.x))
     return tuple(words.say(*where, hour) for where, (hour, _) in sorted(worst.items()))
@@ -150,7 +150,7 @@ class Words:
             amount=amount,
             unit=unit,
             hour=label,
-            sentence=f"{owner}: {amount:,.6g} {unit} short{when}",
+            sentence=f"{owner}: {figure(amount)} {unit} short{when}",
             remedy=REMEDIES[code],
         )
 
@@ -161,9 +161,8 @@ class Words:
             requests = self._requests(block, owner, hour)
             return requests * (use - limit) / use, "requests/s"
         if block.code == "pool-busy":
-            return 100 * (use - limit) / max(
-                self._drives(block, owner), 1
-            ), "busy-percent"
+            drives = max(self._drives(block, owner), 1)
+            return 100 * (use - limit) / drives, "busy-percent"
         return (use - limit) / block.scale, block.unit
 
     def _requests(self, block: Block, owner: int, hour: int) -> float:
@@ -183,7 +182,7 @@ class Words:
             where=where,
             amount=amount,
             unit=unit,
-            sentence=f"{where}: the windows carry {amount:,.6g} {unit} too little",
+            sentence=f"{where}: the windows carry {figure(amount)} {unit} too little",
             remedy=REMEDIES[code],
         )
 

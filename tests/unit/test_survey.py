@@ -198,7 +198,7 @@ def test_a_pool_too_full_today_is_a_warning() -> None:
     finding = only(whole(*volumes, pools=[slow, FAST]))
     assert (finding.code, finding.severity) == ("over-limit-today", Severity.WARNING)
     assert finding.place == AT
-    assert "pool-room" in finding.sentence
+    assert "room 600 of 500 GiB" in finding.sentence
     assert "600 of 500 GiB" in finding.sentence
 
 

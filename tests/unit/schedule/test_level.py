@@ -16,6 +16,9 @@ BLOCK = Block(
     home=np.zeros(0, dtype=np.int64),
     moved=np.zeros(0),
     move_costs=np.zeros(1),
+    ease=np.zeros((1, 1)),
+    eased=np.zeros((0, 1)),
+    swollen=np.ones((0, 1)),
 )
 
 
