@@ -34,7 +34,10 @@ SEEK, RPM, UNIT = 8.5, 7_200, MIB
 
 @dataclass(frozen=True)
 class Asks:
-    """Shares of a drive's load: a volume's requests of one or two sizes [KiB]."""
+    """Shares of a drive's load: a volume's requests of one or two sizes [KiB].
+
+    Of its reads the share ``hits`` never reaches the drive.
+    """
 
     reads: float
     writes: float
@@ -42,6 +45,7 @@ class Asks:
     random: float = 1.0
     large: float = 0.0
     large_kib: float = 0.0
+    hits: float = 0.0
 
     @property
     def sizes(self) -> tuple[tuple[float, float], ...]:
@@ -113,7 +117,7 @@ def flash() -> Drive:
 DRIVES = (spinning(1, 1, 0, 2), spinning(6, 1, 2, 2), spinning(6, 2, 3, 3), flash())
 MIXES = (
     (Asks(70, 30, 8),),
-    (Asks(60, 10, 8), Asks(2, 1, 1_024)),
+    (Asks(60, 10, 8, hits=0.6), Asks(2, 1, 1_024)),
     (Asks(50, 20, 16, random=0.3), Asks(10, 5, 256, random=0.0)),
     (Asks(80, 20, 8, random=0.8, large=0.05, large_kib=2_048), Asks(30, 60, 64)),
 )
@@ -131,6 +135,7 @@ def services(setting: Setting, faster: float) -> Iterator[tuple[float, float]]:
     spins = drive.where.media is Media.SPINNING
     for asks in setting.mix:
         reads, writes = round(asks.reads * faster, 3), round(asks.writes * faster, 3)
+        reads *= 1 - asks.hits
         for share, size in asks.sizes:
             read, moved = drive.read_fixed, size / BYTE_RATE
             stream = read * size / UNIT if spins else read
@@ -233,6 +238,7 @@ def asked(setting: Setting) -> Estate:
         replace(
             volume(f"v{row}", setting.drive.where.id, 1, _load(asks, faster)),
             random_reads=round(asks.random * PPM),
+            read_hits=round(asks.hits * PPM),
             large_share=round(asks.large * PPM),
             large_size=round(asks.large_kib * KIB),
         )

@@ -29,7 +29,7 @@ HOURS = range(24)
 MICRO = 1_000_000
 SECONDS = 30_000.0
 LATER, AT_ONCE = 60.0, 0.02  # [s] from reading the old to writing the new; made up
-WITHIN = 0.1
+WITHIN = 0.02
 
 
 @cache
