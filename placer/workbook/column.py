@@ -83,6 +83,8 @@ class Column:
         Bounds of what can be meant, in the unit typed.
     side
         Which way the number is rounded when it becomes a whole number.
+    read_as
+        Other words that may stand in a cell, each with the one it is read as.
     effect
         What a wrong default could do; the assumptions are listed in this order.
     """
@@ -99,6 +101,7 @@ class Column:
     highest: int = 10**9
     side: Side = Side.NEUTRAL
     words: tuple[str, ...] = ()
+    read_as: tuple[tuple[str, str], ...] = ()
     synonyms: tuple[str, ...] = ()
     effect: Effect = Effect.NONE
 

@@ -2,6 +2,7 @@
 
 import re
 from collections.abc import Callable
+from contextlib import suppress
 from datetime import date, datetime, time, timedelta
 
 from placer.windows.clock import zone_named
@@ -24,18 +25,27 @@ _SWITCHES |= {"false": False}
 _SPREADSHEET_ERROR = re.compile(r"#(N/A|REF!|VALUE!|DIV/0!|NAME\?|NULL!|NUM!)")
 _SCIENTIFIC = re.compile(r"\d([.,]\d+)?E\+\d+")
 _EXACT_DIGITS = 15
+_DATES_IN_WORDS = ("%d %B %Y", "%d %b %Y", "%B %d %Y", "%b %d %Y")
+_TIME = re.compile(
+    r"(?P<hour>\d{1,2})([:.](?P<minute>\d{2})(:00)?)?\s?((?P<half>[ap])\.?m\.?)?",
+    re.IGNORECASE,
+)
 
 
-def read_cell(cell: Cell, column: Column, scale: int) -> Value:
+def read_cell(cell: Cell, column: Column, scale: int, gb: str = "") -> Value:
     """Return the value of a cell that is not blank.
 
     Parameters
     ----------
     scale
         Small units in one of the unit of the heading.
+    gb
+        What GB means in this export; blank where the policy does not say.
 
     Raises
     ------
+    GbUnknownError
+        The cell says GB, and nobody knows which.
     CellFaultError
         The cell is not what the column asks for.
     """
@@ -48,7 +58,7 @@ def read_cell(cell: Cell, column: Column, scale: int) -> Value:
     if _SPREADSHEET_ERROR.fullmatch(cell.text):
         raise CellFaultError("cell", f"the formula gives {cell.text}", "mend it")
     if column.kind in MEASURES:
-        return read_quantity(cell, column, scale)
+        return read_quantity(cell, column, scale, gb)
     return _READERS[column.kind](cell, column)
 
 
@@ -99,6 +109,7 @@ def _switch(cell: Cell, column: Column) -> bool:
 
 def _word(cell: Cell, column: Column) -> str:
     said = cell.text.casefold()
+    said = dict(column.read_as).get(said, said)
     if said not in column.words:
         raise CellFaultError(
             "cell",
@@ -114,13 +125,22 @@ def _date(cell: Cell, column: Column) -> date:
     if isinstance(cell.value, date):
         return cell.value
     try:
-        return date.fromisoformat(cell.text)
+        return _written_date(cell.text)
     except ValueError:
         raise CellFaultError(
             "date",
             f'{column.name} is "{cell.text}", which may mean several dates or none',
             "write it as year-month-day, such as 2026-03-02",
         ) from None
+
+
+def _written_date(text: str) -> date:
+    """Return a date written as year-month-day, or with its month in letters."""
+    words = re.sub(r"[-.,\s]+", " ", text)
+    for pattern in _DATES_IN_WORDS:
+        with suppress(ValueError):
+            return datetime.strptime(words, pattern).date()
+    return date.fromisoformat(text)
 
 
 def _day(cell: Cell, column: Column) -> date | int:
@@ -135,9 +155,8 @@ def _day(cell: Cell, column: Column) -> date | int:
 def _clock(cell: Cell, column: Column) -> time:
     if isinstance(cell.value, time):
         return cell.value.replace(second=0, microsecond=0)
-    found = re.fullmatch(r"(\d{1,2}):(\d{2})(:00)?", cell.text)
     try:
-        return time(int(found[1]), int(found[2])) if found else _no_time()
+        return _written_time(cell)
     except ValueError:
         raise CellFaultError(
             "cell",
@@ -146,8 +165,17 @@ def _clock(cell: Cell, column: Column) -> time:
         ) from None
 
 
-def _no_time() -> time:
-    raise ValueError
+def _written_time(cell: Cell) -> time:
+    """Return 22:00, 22.00, 10 pm or 10:00 pm as a time."""
+    found = _TIME.fullmatch(cell.text) if isinstance(cell.value, str) else None
+    if found is None or not (found["minute"] or found["half"]):
+        raise ValueError(cell.text)
+    hour, half = int(found["hour"]), (found["half"] or "").casefold()
+    if half:
+        if not 1 <= hour <= 12:
+            raise ValueError(cell.text)
+        hour = hour % 12 + (12 if half == "p" else 0)
+    return time(hour, int(found["minute"] or 0))
 
 
 def _zone(cell: Cell, column: Column) -> str:

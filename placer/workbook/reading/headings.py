@@ -11,7 +11,6 @@ from placer.workbook.reading.raw import Cell
 from placer.workbook.reading.remarks import Remarks
 from placer.workbook.reading.scales import (
     asks_gb,
-    binary_twin,
     is_rate,
     own_scale,
     scale,
@@ -20,15 +19,17 @@ from placer.workbook.reading.scales import (
 )
 
 _HEADING_ROWS = 20
+_PERCENT_SIGN = re.compile(r"^\s*%(?!/)|%\s*$")
 
 
 @dataclass(frozen=True, slots=True)
 class Heading:
-    """A column found in a sheet: where, and the scale of its unit."""
+    """A column found in a sheet: where, the scale of its unit, what GB means there."""
 
     column: Column
     index: int
     scale: int
+    gb: str = ""
 
 
 @dataclass(frozen=True, slots=True)
@@ -56,10 +57,12 @@ def readings(text: str) -> tuple[Spoken, ...]:
     """Return the ways to take a heading apart, the likeliest first.
 
     The unit stands in brackets; or there is none; or it is the first word, as in
-    "MiB/s per drive", or the last.
+    "MiB/s per drive", or the last; or a percent sign at either end.
     """
     brackets = re.findall(r"[(\[](.*?)[)\]]", text)
     units = [unit for unit in map(unit_named, brackets) if unit]
+    if not brackets and _PERCENT_SIGN.search(text):
+        units = ["%"]
     unknown = brackets[-1] if brackets and not units else ""
     words = re.sub(r"[(\[].*?[)\]]", " ", text).split()
     found = [Spoken(key(text), units[-1] if units else None, unknown)]
@@ -113,16 +116,17 @@ class Headings:
         for spoken in readings(cell.text):
             for column in self._columns:
                 if spoken.key in column.keys:
-                    return Heading(column, index, self._scale(cell, column, spoken))
+                    scale_ = self._scale(cell, column, spoken)
+                    return Heading(column, index, scale_, self._gb)
         return None
 
     def _scale(self, cell: Cell, column: Column, spoken: Spoken) -> int:
         if spoken.unit is None:
             self._say_no_unit(cell, column, spoken.unknown)
             return own_scale(column)
-        if asks_gb(column, spoken.unit):
-            return self._gb_scale(cell, column, spoken.unit)
-        found = scale(column, spoken.unit)
+        if asks_gb(column, spoken.unit) and not self._gb:
+            self._remarks.ask_gb(cell.place, cell.text)
+        found = scale(column, spoken.unit, self._gb)
         if found is None and column.kind in MEASURES:
             needed = column.unit or "none"
             self._remarks.error(
@@ -132,12 +136,6 @@ class Headings:
                 f'head it "{column.header}" and convert the numbers',
             )
         return found or own_scale(column)
-
-    def _gb_scale(self, cell: Cell, column: Column, unit: str) -> int:
-        if not self._gb:
-            self._remarks.ask_gb(cell.place, cell.text)
-        meant = binary_twin(unit) if self._gb == "2^30" else unit
-        return scale(column, meant) or own_scale(column)
 
     def _say_no_unit(self, cell: Cell, column: Column, bracket: str) -> None:
         if bracket and column.unit:

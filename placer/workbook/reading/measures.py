@@ -2,6 +2,7 @@
 
 import re
 from collections.abc import Callable
+from dataclasses import replace
 from datetime import date, datetime, time, timedelta
 from decimal import Decimal
 
@@ -12,22 +13,28 @@ from placer.workbook.reading.numbers import (
     number,
 )
 from placer.workbook.reading.raw import Cell
-from placer.workbook.reading.scales import own_scale
-from placer.workbook.reading.values import CellFaultError, Quantity
+from placer.workbook.reading.scales import asks_gb, own_scale, scale, unit_named
+from placer.workbook.reading.values import CellFaultError, GbUnknownError, Quantity
 
 
-def read_quantity(cell: Cell, column: Column, scale: int) -> Quantity:
+def read_quantity(
+    cell: Cell, column: Column, heading_scale: int, gb: str = ""
+) -> Quantity:
     """Return the quantity of a cell that is not blank.
 
     Parameters
     ----------
-    scale
-        Small units in one of the unit of the heading.
+    heading_scale
+        Small units in one of the unit of the heading; a unit in the cell wins.
+    gb
+        What GB means in this export; blank where the policy does not say.
 
     Raises
     ------
     CellFaultError
         The cell is no number, an ambiguous one, or out of bounds.
+    GbUnknownError
+        The cell says GB, and nobody knows which.
     """
     if cell.merged:
         raise CellFaultError(
@@ -36,10 +43,25 @@ def read_quantity(cell: Cell, column: Column, scale: int) -> Quantity:
             "unmerge and say the number of each row",
         )
     if cell.text.casefold() == NOT_LIMITED and _may_be_unlimited(column):
-        return Quantity(Decimal(0), scale)
-    quantity = Quantity(MEASURES[column.kind](cell, column), scale)
+        return Quantity(Decimal(0), heading_scale)
+    bare, own = _without_unit(cell, column, gb)
+    number_ = MEASURES[column.kind](bare, column)
+    quantity = Quantity(number_, heading_scale if own is None else own)
     _check_bounds(quantity, cell, column)
     return quantity
+
+
+def _without_unit(cell: Cell, column: Column, gb: str) -> tuple[Cell, int | None]:
+    """Return the cell without the unit that fits the column, and that unit's scale."""
+    measured = column.kind in (Kind.NUMBER, Kind.COUNT) and isinstance(cell.value, str)
+    parts = re.fullmatch(r"(.*\d)\s*(\D+)", cell.text) if measured else None
+    unit = unit_named(parts[2]) if parts else None
+    found = scale(column, unit, gb) if unit else None
+    if parts is None or found is None:
+        return cell, None
+    if asks_gb(column, unit) and not gb:
+        raise GbUnknownError("unit", "GB may mean 10^9 or 2^30 bytes")
+    return replace(cell, value=parts[1]), found
 
 
 def _may_be_unlimited(column: Column) -> bool:

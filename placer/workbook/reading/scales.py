@@ -116,9 +116,17 @@ def own_scale(column: Column) -> int:
     return _dimension(column)[unit_named(column.unit) or ""]
 
 
-def scale(column: Column, unit: str | None) -> int | None:
-    """Return how many small units a heading's unit holds; None: it does not fit."""
-    return _dimension(column).get(unit or "")
+def scale(column: Column, unit: str | None, gb: str = "") -> int | None:
+    """Return how many small units a unit holds; None: it does not fit the column.
+
+    Parameters
+    ----------
+    gb
+        What GB means where it is asked: 2^30, or else 10^9.
+    """
+    twin = gb == "2^30" and asks_gb(column, unit)
+    meant = _BINARY_TWIN[unit] if unit and twin else unit
+    return _dimension(column).get(meant or "")
 
 
 def unit_matters(column: Column) -> bool:
@@ -129,11 +137,6 @@ def unit_matters(column: Column) -> bool:
 def asks_gb(column: Column, unit: str | None) -> bool:
     """Return whether GB and the like stand where a heading of ours says GiB."""
     return column.unit == "GiB" and unit in _BINARY_TWIN
-
-
-def binary_twin(unit: str) -> str:
-    """Return GiB for GB, and so on."""
-    return _BINARY_TWIN[unit]
 
 
 def _dimension(column: Column) -> dict[str, int]:

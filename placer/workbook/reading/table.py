@@ -7,6 +7,7 @@ from fractions import Fraction
 
 from placer.findings import Place
 from placer.units import whole
+from placer.words import count
 from placer.workbook.column import Column, Kind, Sheet
 from placer.workbook.reading.cells import read_cell
 from placer.workbook.reading.headings import Heading, Headings, heading_row
@@ -14,7 +15,12 @@ from placer.workbook.reading.raw import Cell, RawSheet
 from placer.workbook.reading.remarks import Remarks
 from placer.workbook.reading.scales import own_scale
 from placer.workbook.reading.totalrows import without_totals
-from placer.workbook.reading.values import CellFaultError, Quantity, Value
+from placer.workbook.reading.values import (
+    CellFaultError,
+    GbUnknownError,
+    Quantity,
+    Value,
+)
 
 
 @dataclass(frozen=True, slots=True)
@@ -151,8 +157,10 @@ def read_table(
     if not sheet.of_totals:
         body = without_totals(body, headings, remarks)
     for heading in headings:
+        cells = [row[heading.index] for row in body]
         if heading.column.kind is Kind.ID:
-            _say_numbers([row[heading.index] for row in body], heading.column, remarks)
+            _say_numbers(cells, heading.column, remarks)
+        _say_read_as(cells, heading.column, remarks)
     return tuple(read_row(row, headings, sheet, remarks) for row in body)
 
 
@@ -166,9 +174,12 @@ def read_row(
         cell, column = cells[heading.index], heading.column
         try:
             if not cell.blank:
-                values[column.name] = read_cell(cell, column, heading.scale)
+                values[column.name] = read_cell(cell, column, heading.scale, heading.gb)
             elif column.required:
                 raise _blank(column)
+        except GbUnknownError:
+            faulty.add(column.name)
+            remarks.ask_gb(cell.place, cell.text)
         except CellFaultError as fault:
             faulty.add(column.name)
             remarks.error(fault.code, cell.place, fault.sentence, fault.remedy)
@@ -191,6 +202,20 @@ def _say_numbers(cells: Sequence[Cell], column: Column, remarks: Remarks) -> Non
             "leading zeros are lost",
             "format the column as text and write the names again where zeros matter",
         )
+
+
+def _say_read_as(cells: Sequence[Cell], column: Column, remarks: Remarks) -> None:
+    """Say once per word that it is read as one of ours."""
+    for word, meant in column.read_as:
+        said = [cell for cell in cells if cell.text.casefold() == word]
+        if said:
+            remarks.note(
+                "read-as",
+                said[0].place,
+                f'{column.name} "{said[0].text}" is read as {meant} in '
+                f"{count(len(said), 'cell')}",
+                f"write {', '.join(column.words)}, whatever is meant",
+            )
 
 
 def _blank(column: Column) -> CellFaultError:

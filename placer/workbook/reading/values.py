@@ -30,3 +30,7 @@ class CellFaultError(ValueError):
         self.code = code
         self.sentence = sentence
         self.remedy = remedy
+
+
+class GbUnknownError(CellFaultError):
+    """A cell says GB where it may mean 10^9 or 2^30 bytes."""

@@ -206,6 +206,7 @@ POOLS = Sheet(
             kind=Kind.WORD,
             required=True,
             words=tuple(media.value for media in Media),
+            read_as=(("ssd", Media.FLASH.value), ("hdd", Media.SPINNING.value)),
             synonyms=("medium", "media type"),
             meaning="flash, spinning; mixed and unmodelled only give volumes away",
         ),

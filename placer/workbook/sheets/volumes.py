@@ -74,7 +74,13 @@ VOLUMES = Sheet(
             required=True,
             side=Side.DEMAND,
             highest=100,
-            synonyms=("read share", "read percentage", "read ratio", "percent reads"),
+            synonyms=(
+                "read",
+                "read share",
+                "read percentage",
+                "read ratio",
+                "percent reads",
+            ),
             meaning="share of the requests that are reads",
         ),
         Column(

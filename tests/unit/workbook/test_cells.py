@@ -91,7 +91,7 @@ def test_reads_over_a_hundred_are_refused() -> None:
     assert fault("volumes/reads", 1.01, percent=True).code == "bounds"
 
 
-@pytest.mark.parametrize("raw", ["many", "12 GiB", "-", True, datetime(2026, 3, 2)])
+@pytest.mark.parametrize("raw", ["many", "12 G", "-", True, datetime(2026, 3, 2)])
 def test_what_is_no_number_is_refused(raw: object) -> None:
     assert fault("volumes/provisioned", raw).code == "cell"
 
@@ -140,10 +140,76 @@ def test_words_know_no_case_and_others_are_refused() -> None:
     assert fault("volumes/thin", "perhaps").code == "cell"
 
 
+@pytest.mark.parametrize(
+    "raw",
+    [
+        *("4 January 2027", "4 Jan 2027", "04-Jan-2027", "4. january 2027"),
+        *("January 4, 2027", "Jan 4 2027"),
+    ],
+)
+def test_a_date_with_the_name_of_its_month_has_one_meaning(raw: str) -> None:
+    assert value("policy/start date", raw) == date(2027, 1, 4)
+    assert value("load/day", raw) == date(2027, 1, 4)
+
+
+@pytest.mark.parametrize(
+    ("raw", "meant"),
+    [
+        *(("10pm", time(22)), ("10 PM", time(22)), ("22.00", time(22))),
+        *(("10:30 p.m.", time(22, 30)), ("6.15am", time(6, 15))),
+        *(("12 am", time(0)), ("12 pm", time(12)), ("22:00:00", time(22))),
+    ],
+)
+def test_a_time_may_be_said_in_other_ways(raw: str, meant: time) -> None:
+    """12 am is midnight and 12 pm noon: common practice, no source."""
+    assert value("windows/opens at", raw) == meant
+
+
+@pytest.mark.parametrize(
+    ("name", "raw", "small"),
+    [
+        ("pools/drive size", "3.84 TB", 3_840_000_000_000),
+        ("pools/drive size", "500GB", 500_000_000_000),
+        ("volumes/provisioned", "12 GiB", 12 * 2**30),
+        ("volumes/provisioned", "1 234,5 TiB", Fraction("1234.5") * 2**40),
+        ("volumes/response limit", "10 ms", 10_000),
+        ("arrays/write answer", "0.5 ms", 500),
+        ("volumes/throughput", "80 Mbit/s", 10_000_000),
+        ("volumes/requests", "1500 IOPS", 1_500_000),
+        ("policy/hold", "2 weeks", 14),
+    ],
+)
+def test_a_number_may_bring_its_unit(name: str, raw: str, small: Fraction) -> None:
+    """Units as in test_scales."""
+    assert exact(name, raw) == small
+
+
+@pytest.mark.parametrize(
+    ("name", "raw"),
+    [
+        ("volumes/provisioned", "12 GB/s"),
+        ("volumes/provisioned", "50%"),
+        ("volumes/throughput", "12 Mbit"),
+        ("volumes/throughput", "12 mbps"),
+        ("volumes/response limit", "10 m"),
+        ("pools/drives without spares", "12 TB"),
+    ],
+)
+def test_a_unit_that_does_not_fit_or_could_be_two_is_refused(
+    name: str, raw: str
+) -> None:
+    assert fault(name, raw).code == "cell"
+
+
+def test_a_number_with_a_unit_keeps_to_the_bounds() -> None:
+    assert fault("volumes/response limit", "61 s").code == "bounds"
+    assert fault("volumes/provisioned", "1,234 GiB").code == "ambiguous"
+
+
 def test_dates_are_dates_or_iso_text_and_nothing_else() -> None:
     assert value("policy/start date", datetime(2026, 3, 2)) == date(2026, 3, 2)
     assert value("policy/start date", "2026-03-02") == date(2026, 3, 2)
-    for raw in ("02/03/2026", "2.3.26", 46083, "March"):
+    for raw in ("02/03/2026", "2.3.26", 46083, "March", "4 Jan 27", "31 June 2027"):
         assert fault("policy/start date", raw).code == "date"
 
 
@@ -157,7 +223,7 @@ def test_days_are_weekdays_or_dates() -> None:
 def test_times_of_day() -> None:
     assert value("windows/opens at", "22:00") == time(22)
     assert value("windows/opens at", time(6, 30)) == time(6, 30)
-    for raw in ("24:00", "10 pm", 0.5, "22"):
+    for raw in ("24:00", 0.5, "22", 22.15, "13 pm", "0 am", "10:60 pm", "22.5"):
         assert fault("windows/opens at", raw).code == "cell"
 
 

@@ -84,6 +84,26 @@ def test_a_unit_that_cannot_be_meant_is_an_error(heading: str) -> None:
     assert [(f.severity, f.code) for f in findings] == [("error", "unit")]
 
 
+@pytest.mark.parametrize(
+    "heading", ["Read %", "reads%", "% reads", "%Read", "READ (%)", "reads percent"]
+)
+def test_a_percent_sign_is_a_unit_wherever_it_stands(heading: str) -> None:
+    found, findings = find("volumes", [heading])
+    assert list(found) == ["reads"]
+    assert findings == ()
+
+
+@pytest.mark.parametrize("heading", ["requests %", "% provisioned", "requests%"])
+def test_a_percent_sign_where_no_percent_is_asked_is_an_error(heading: str) -> None:
+    _, findings = find("volumes", [heading])
+    assert [(f.severity, f.code) for f in findings] == [("error", "unit")]
+
+
+def test_a_ratio_headed_with_a_percent_sign_is_in_percent() -> None:
+    found, _ = find("pools", ["skew %"])
+    assert found["skew"].scale == 10_000
+
+
 def test_a_column_that_is_not_ours_is_a_note_and_the_near_one_suggested() -> None:
     _, findings = find("volumes", ["colour", "provisoned (GiB)"])
     assert {f.severity for f in findings} == {"note"}

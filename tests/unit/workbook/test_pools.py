@@ -221,3 +221,18 @@ def test_a_lost_drive_that_cannot_be_counted_is_said(
     found = intake(tmp_path, sheets)
     assert found.estate is not None
     assert [(f.severity, f.code) for f in found.findings] == [("warning", "lost-drive")]
+
+
+def test_drives_may_be_named_as_the_trade_does_and_it_is_said_once(
+    tmp_path: Path,
+) -> None:
+    sheets = least()
+    sheets["pools"][1][2], sheets["pools"][2][2] = "HDD", "SSD"
+    sheets["pools"].append(["F2", "L", "ssd", 8, 3840])
+    found = intake(tmp_path, sheets)
+    assert found.estate is not None
+    assert [p.media for p in found.estate.pools] == ["spinning", "flash", "flash"]
+    assert [p.read_time for p in found.estate.pools] == [0, 150, 150]
+    said = [(f.severity, f.code, f.place.cell) for f in found.findings]
+    assert said == [("note", "read-as", "C3"), ("note", "read-as", "C2")]
+    assert "2 cells" in found.findings[0].sentence

@@ -6,7 +6,7 @@ from zipfile import ZipFile
 
 import pytest
 from openpyxl.utils.datetime import CALENDAR_MAC_1904
-from sheetfiles import TODAY, Changed, as_workbook, intake, least, only_error
+from sheetfiles import TODAY, Changed, as_workbook, estate, intake, least, only_error
 
 from placer.workbook.intake import Intake, read
 
@@ -198,6 +198,35 @@ def test_a_heading_in_mbit_is_converted(tmp_path: Path) -> None:
     sheets = least()
     sheets["volumes"][0][7] = "throughput (Mbit/s)"
     assert intake(tmp_path, sheets).totals[-1].throughput == pytest.approx(28.5 / 8)
+
+
+def test_gb_in_cells_is_asked_once_and_the_answer_used(tmp_path: Path) -> None:
+    sheets = least()
+    for row in sheets["volumes"][1:]:
+        row[3:5] = [f"{row[3]} GB", f"{row[4]} GB"]
+    error = only_error(intake(tmp_path, sheets))
+    assert (error.code, str(error.place)) == ("unit", "volumes!D2")
+    for answer, gib in (("10^9", 1800 * 10**9 / 2**30), ("2^30", 1800)):
+        sheets["policy"] = [
+            ["setting", "value"],
+            ["GB in this export means", answer],
+            ["one cutover counts as", "2 GB"],
+        ]
+        found = intake(tmp_path, sheets)
+        assert found.estate is not None
+        assert found.totals[-1].provisioned == pytest.approx(gib)
+        counts = found.estate.policy.cutover_counts_as
+        assert counts == (2 * 10**9 if answer == "10^9" else 2 * 2**30)
+
+
+def test_a_column_without_a_unit_whose_cells_have_theirs_is_clear(
+    tmp_path: Path,
+) -> None:
+    sheets = least()
+    sheets["pools"][0][4] = "drive size"
+    sheets["pools"][1][4], sheets["pools"][2][4] = "1.2 TB", "3.84 TB"
+    found = estate(tmp_path, sheets)
+    assert [p.drive_size for p in found.pools] == [1_200 * 10**9, 3_840 * 10**9]
 
 
 def test_gb_is_asked_once_and_the_answer_used(tmp_path: Path) -> None:
