@@ -6,8 +6,8 @@ import numpy as np
 
 from placer.candidates.block import Block, Floats, Ints
 from placer.candidates.table import Candidates
+from placer.physics.drives import busy_drives
 from placer.plan import Moment, Use
-from placer.units import PPM
 
 
 def uses(
@@ -35,6 +35,7 @@ def uses(
             _use(candidates, block, owner, used, bought, moment)
             for block in blocks
             for owner, used in enumerate(block.use(places))
+            if _scale(candidates, block, owner, bought)
         ),
         *_hosts(candidates, places, moment),
     )
@@ -46,20 +47,6 @@ def limit_of(block: Block, owner: int, bought: Ints) -> float:
     return float(block.limits[owner, steps[0] if len(steps) == 1 else 0])
 
 
-def over(block: Block, places: Ints, bought: Ints) -> Iterator[int]:
-    """Yield the owners that a placement takes over their limit."""
-    worst = block.use(places).max(axis=1)
-    for owner in range(len(block.owners)):
-        if worst[owner] > limit_of(block, owner, bought):
-            yield owner
-
-
-def in_percent(candidates: Candidates, block: Block, owner: int) -> float:
-    """Return the ceiling [%] that a pool's busy limit stands for."""
-    pool = int(np.flatnonzero(block.owner_of == owner)[0])
-    return 100 * candidates.pools[pool].busy_ceiling / PPM
-
-
 def _use(
     candidates: Candidates,
     block: Block,
@@ -69,20 +56,25 @@ def _use(
     moment: Moment,
 ) -> Use:
     hour = int(used.argmax())
-    limit, unit, scale = limit_of(block, owner, bought), block.unit, block.scale
-    if block.code == "pool-busy":
-        percent = in_percent(candidates, block, owner)
-        unit, scale = "%", (limit or 1.0) / percent
+    scale = _scale(candidates, block, owner, bought)
     label = candidates.estate.hours[hour].label if block.hourly else ""
     return Use(
         where=block.owners[owner],
         limit=block.code,
         moment=moment,
         use=float(used[hour]) / scale,
-        at_most=limit / scale,
-        unit=unit,
+        at_most=limit_of(block, owner, bought) / scale,
+        unit="%" if block.code == "pool-busy" else block.unit,
         hour=label,
     )
+
+
+def _scale(candidates: Candidates, block: Block, owner: int, bought: Ints) -> float:
+    """Return the limit's own units in one of the report's; 0 without any drives."""
+    if block.code != "pool-busy":
+        return block.scale
+    pool = int(np.flatnonzero(block.owner_of == owner)[0])
+    return busy_drives(candidates.pools[pool], int(bought[pool])) / 100
 
 
 def _hosts(candidates: Candidates, places: Ints, moment: Moment) -> Iterator[Use]:

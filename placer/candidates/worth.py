@@ -3,11 +3,12 @@
 Responses are whole microseconds, rounded up, 0 where unknown.
 """
 
+from dataclasses import replace
 from math import ceil
 
 import numpy as np
 
-from placer.candidates.block import Block, Floats, Ints
+from placer.candidates.block import Floats, Ints
 from placer.candidates.limits import Date, pool_busy
 from placer.candidates.mixes import Mixes
 from placer.estate import Estate, Policy, Volume
@@ -40,7 +41,8 @@ class Responses:
         self._estate = estate
         self._arrays = {array.name: array for array in estate.arrays}
         self._date = Date(estate, 0)
-        self._busy: Block = pool_busy(self._date)
+        busy = pool_busy(self._date)
+        self._busy = replace(busy, swollen=np.ones_like(busy.swollen))
         self._peak = [busiest_hour(volume) for volume in estate.volumes]
         every = range(len(estate.volumes))
         self.requests = self._date.loads[every, self._peak, :2].sum(axis=1)

@@ -83,6 +83,7 @@ class Program:
             np.append(self.high, at_most / scale),
             (*self.keys, key),
             self.choices,
+            self.overruns_allowed,
         )
 
     def restricted(self, free: Ints, x: Floats) -> "Program":

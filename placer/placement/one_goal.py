@@ -91,7 +91,7 @@ class OneGoal:
         best = min(known, key=lambda x: float(self._cost @ x), default=None)
         bound = max(answer.bound for answer in answers)
         if best is not None:
-            bound = min(bound, float(self._cost @ best))
+            bound = _settled(float(self._cost @ best), bound)
         return solver.Answer(
             best,
             bound,
@@ -109,3 +109,9 @@ class OneGoal:
 
     def _left(self) -> float:
         return self._effort.seconds - (time.monotonic() - self._begin)
+
+
+def _settled(value: float, bound: float) -> float:
+    """Return the bound, without what only rounding keeps it from the value."""
+    close = value - bound <= ROUNDING * max(1.0, abs(value))
+    return value if close else bound
