@@ -8,6 +8,7 @@ from placer.windows.clock import instant, working_days_later
 from placer.workbook.column import GB_MEANS, Sheet, key
 from placer.workbook.columns import SETTINGS
 from placer.workbook.reading.headings import Headings, heading_row
+from placer.workbook.reading.merged import say_merged
 from placer.workbook.reading.raw import Cell, RawSheet
 from placer.workbook.reading.remarks import Remarks
 from placer.workbook.reading.table import Row, read_row
@@ -41,6 +42,7 @@ def _lines(raw: RawSheet, pairs: Sheet, remarks: Remarks) -> list[tuple[Cell, Ce
         headings = Headings(pairs.columns, remarks, "").find(raw.rows[start])
         found |= {heading.column.name: heading.index for heading in headings}
     rows = raw.rows[0 if start is None else start + 1 :]
+    say_merged(raw.name, rows, remarks)
     return [
         (row[found["setting"]], row[found["value"]])
         for row in rows

@@ -23,13 +23,13 @@ class Cell:
     percent
         Whether a number is formatted as a percentage.
     merged
-        Whether the value really stands in another cell, merged with this one.
+        The area of merged cells, where the value really stands in another of them.
     """
 
     value: object
     place: Place
     percent: bool = False
-    merged: bool = False
+    merged: str = ""
 
     @property
     def blank(self) -> bool:

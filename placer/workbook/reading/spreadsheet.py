@@ -1,4 +1,4 @@
-"""Raw cells from a workbook; says what is hidden, filtered or merged."""
+"""Raw cells from a workbook; says what is hidden or filtered."""
 
 import re
 import warnings
@@ -16,6 +16,7 @@ from placer.findings import Place
 from placer.workbook.reading.raw import Cell, RawSheet, Trouble
 from placer.workbook.reading.remarks import Remarks
 
+_Held = tuple[Source | MergedCell, str]
 _FORMULA = re.compile(rb"<(\w+:)?f[ />]")
 _COMPOUND_FILE = b"\xd0\xcf\x11\xe0"
 
@@ -67,7 +68,7 @@ def _has_formulas(path: Path) -> bool:
 
 
 def _sheet(stored: Worksheet, written: Worksheet, remarks: Remarks) -> RawSheet:
-    merged = _merged(stored, remarks)
+    merged = _merged(stored)
     _say_hidden(stored, remarks)
     places = _filled(written)
     columns = sorted({column for _, column in places})
@@ -94,9 +95,9 @@ def _filled(sheet: Worksheet) -> list[tuple[int, int]]:
 def _cell(
     cell: Source | MergedCell,
     formula: Source | MergedCell,
-    merged: dict[str, Source | MergedCell],
+    merged: dict[str, _Held],
 ) -> Cell:
-    source = merged.get(cell.coordinate, cell)
+    source, area = merged.get(cell.coordinate, (cell, ""))
     value: object = source.value
     if value is None and formula.data_type == "f":
         value = Trouble.NO_STORED_VALUE
@@ -104,24 +105,18 @@ def _cell(
         value,
         Place(str(cell.parent.title), cell.coordinate),
         percent="%" in str(source.number_format),
-        merged=isinstance(cell, MergedCell),
+        merged=area,
     )
 
 
-def _merged(sheet: Worksheet, remarks: Remarks) -> dict[str, Source | MergedCell]:
-    """Return for each cell that is merged away the one that holds its value."""
-    holders: dict[str, Source | MergedCell] = {}
+def _merged(sheet: Worksheet) -> dict[str, _Held]:
+    """Return for each cell that is merged away the one with its value, and the area."""
+    holders: dict[str, _Held] = {}
     for area in sheet.merged_cells.ranges:
         first = sheet.cell(area.min_row, area.min_col)
         for row, column in area.cells:
             if (row, column) != (area.min_row, area.min_col):
-                holders[sheet.cell(row, column).coordinate] = first
-        remarks.warn(
-            "merged",
-            Place(sheet.title, area.coord),
-            "cells are merged; words are read for each of them, numbers are refused",
-            "unmerge them and fill in each cell",
-        )
+                holders[sheet.cell(row, column).coordinate] = first, area.coord
     return holders
 
 

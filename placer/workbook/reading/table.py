@@ -11,6 +11,7 @@ from placer.words import count
 from placer.workbook.column import Column, Kind, Sheet
 from placer.workbook.reading.cells import read_cell
 from placer.workbook.reading.headings import Heading, Headings, heading_row
+from placer.workbook.reading.merged import say_merged
 from placer.workbook.reading.raw import Cell, RawSheet
 from placer.workbook.reading.remarks import Remarks
 from placer.workbook.reading.scales import own_scale
@@ -151,6 +152,7 @@ def read_table(
     if start is None:
         _say_no_headings(raw, sheet, remarks)
         return ()
+    say_merged(raw.name, raw.rows[start:], remarks)
     headings = Headings(sheet.columns, remarks, gb).find(raw.rows[start])
     _say_missing(headings, sheet, raw, remarks)
     body: list[Sequence[Cell]] = [row for row in raw.rows[start + 1 :] if _filled(row)]
@@ -198,7 +200,7 @@ def _say_numbers(cells: Sequence[Cell], column: Column, remarks: Remarks) -> Non
         remarks.warn(
             "id",
             numbers[0].place,
-            f"{column.name} holds {len(numbers)} names that are stored as numbers: "
+            f"{column.name} is stored as a number in {count(len(numbers), 'cell')}: "
             "leading zeros are lost",
             "format the column as text and write the names again where zeros matter",
         )

@@ -242,7 +242,8 @@ SETTINGS = (
         default="10",
         highest=1000,
         effect=Effect.GOALS,
-        meaning="how far over its response limit a volume still counts as served",
+        meaning="on response limits only: how far over its limit a volume still "
+        "counts as served; room and load have no tolerance",
     ),
     Column(
         name="cured by",

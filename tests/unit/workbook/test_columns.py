@@ -65,3 +65,8 @@ def test_a_key_knows_no_case_blanks_punctuation_or_unit() -> None:
 def test_every_heading_and_default_can_be_saved_in_any_code_page() -> None:
     shown = [text for _, c in EVERY for text in (c.header, c.shown_default)]
     assert [text for text in shown if not text.isascii()] == []
+
+
+def test_the_tolerance_is_said_to_be_on_responses_and_not_on_room() -> None:
+    tolerance = next(each for each in SETTINGS if each.name == "tolerance on limits")
+    assert "response limits only" in tolerance.meaning

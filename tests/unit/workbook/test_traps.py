@@ -82,6 +82,18 @@ def test_merged_words_are_read_for_each_cell_and_said(changed: Changed) -> None:
     assert codes(found) == [("warning", "merged", "volumes!C2:C3")]
 
 
+def test_a_merged_title_above_the_headings_is_no_matter(tmp_path: Path) -> None:
+    sheets = least() | {"policy": [["setting", "value"], ["hold (days)", 7]]}
+    for lines in sheets.values():
+        lines.insert(0, ["Export of March"])
+    changed = Changed(tmp_path / "estate.xlsx", sheets)
+    for name in sheets:
+        changed[name].merge_cells("A1:B1")
+    assert codes(changed.read()) == []
+    changed["policy"].merge_cells("A3:B3")
+    assert ("warning", "merged", "policy!A3:B3") in codes(changed.read())
+
+
 def test_merged_numbers_are_refused(changed: Changed) -> None:
     changed["volumes"].merge_cells("E2:E3")
     assert ("error", "merged", "volumes!E3") in codes(changed.read())
@@ -112,7 +124,9 @@ def test_names_stored_as_numbers_are_read_and_said_once(tmp_path: Path) -> None:
     assert found.estate is not None
     assert found.estate.volumes[0].name == "101"
     assert codes(found) == [("warning", "id", "volumes!B2")]
-    assert "2 names" in found.findings[0].sentence
+    assert "in 2 cells" in found.findings[0].sentence
+    sheets["volumes"][2][1] = "db02"
+    assert "in 1 cell:" in intake(tmp_path, sheets).findings[0].sentence
 
 
 @pytest.mark.parametrize(
