@@ -1,9 +1,10 @@
 """Responses of a spinning pool of the ferry company, against a simulation of its drive.
 
-Simulated is a drive, mostly the busiest, for every hour of the day: reads of all volumes that
-miss the cache, and the destaging of writes, which reads the old data and parities and
-later writes the new ones on the same drives.  The drive gets the skew times its even
-share of each; a sequential read positions only where a prefetch unit begins.
+Simulated is a drive, mostly the busiest, for every hour of the day: reads of all
+volumes that miss the cache, and the destaging of writes, which reads the old data and
+parities and later writes the new ones on the same drives.  The busiest drive gets the
+skew times its even share of each; a sequential read positions only where a prefetch
+unit begins.
 """
 
 from collections import Counter
