@@ -33,14 +33,15 @@ class Effect(IntEnum):
 
     CALENDAR = 0
     NIGHTS = 1
-    ROOM = 2
-    BUSY = 3
-    RESPONSE = 4
-    COPYING = 5
-    WEAR = 6
-    GROWTH = 7
-    GOALS = 8
-    NONE = 9
+    REACH = 2
+    ROOM = 3
+    BUSY = 4
+    RESPONSE = 5
+    COPYING = 6
+    WEAR = 7
+    GROWTH = 8
+    GOALS = 9
+    NONE = 10
 
     @property
     def sentence(self) -> str:
@@ -51,6 +52,7 @@ class Effect(IntEnum):
 _SENTENCES = {
     Effect.CALENDAR: "decides on which nights anything can move at all",
     Effect.NIGHTS: "decides when moves can begin and how many fit a night",
+    Effect.REACH: "decides which arrays a volume may move to",
     Effect.ROOM: "decides how much fits into a pool",
     Effect.BUSY: "decides how much load a pool or an array carries",
     Effect.RESPONSE: "decides which volumes gain from a move",

@@ -15,7 +15,6 @@ from placer.workbook.reading.control import Total, read_controls, totals
 from placer.workbook.reading.digest import digest
 from placer.workbook.reading.hours import Clock, LoadReader
 from placer.workbook.reading.machines import (
-    assume_caches,
     places_of,
     read_arrays,
     read_hosts,
@@ -178,7 +177,8 @@ def _machines(tables: Tables, remarks: Remarks) -> _Machines:
         (row.text("array"), row.place("array"))
         for row in (*tables["pools"], *tables["volumes"])
     ]
-    arrays = read_arrays(tables["arrays"], named, array_names, remarks)
+    hits = any(row.exact("read hits") for row in tables["volumes"])
+    arrays = read_arrays(tables["arrays"], named, array_names, remarks, hits=hits)
     return _Machines(
         pools,
         pool_names,
@@ -215,7 +215,6 @@ def _demand(
     rows = tables["volumes"]
     say_unlisted_hosts(rows, machines.hosts, machines.host_names, remarks)
     check_applications(rows, Names("application", remarks))
-    assume_caches(machines.arrays, volumes, remarks)
     return _Demand(hours, volumes)
 
 

@@ -1,8 +1,8 @@
 """Rows of the sheets arrays, hosts and routes to their records."""
 
-from collections.abc import Iterable, Sequence
+from collections.abc import Iterable, Iterator, Sequence
 
-from placer.estate import Array, Host, Route, Volume
+from placer.estate import Array, Host, Route
 from placer.findings import Place
 from placer.units import supply
 from placer.workbook.columns import sheet
@@ -16,6 +16,8 @@ def read_arrays(
     others: Iterable[tuple[str, Place]],
     names: Names,
     remarks: Remarks,
+    *,
+    hits: bool,
 ) -> tuple[Array, ...]:
     """Return the arrays of the sheet, then those only named elsewhere, by default.
 
@@ -23,30 +25,33 @@ def read_arrays(
     ----------
     others
         Arrays named in other sheets, with the cell.
+    hits
+        Whether the reads of any volume hit a cache.
     """
     listed = []
     sites = Names("site", remarks)
     for row in rows:
-        listed.append(_array(row))
+        listed.append(_array(row, hits=hits))
         if row.given("array"):
             names.add(row.text("array"), row.place("array"))
         if row.given("site"):
             sites.meet(row.text("site"), row.place("site"))
-    return (*listed, *_unlisted(others, names, remarks))
+    unlisted = _unlisted(others, names, remarks)
+    return (*listed, *(_array(row, hits=hits) for row in unlisted))
 
 
 def _unlisted(
     others: Iterable[tuple[str, Place]], names: Names, remarks: Remarks
-) -> Iterable[Array]:
+) -> Iterator[Row]:
     for name, place in others:
         if name and names.meet(name, place):
             described = sheet("arrays")
-            yield _array(
-                Row(described, {"array": name}, {"array": place}, frozenset(), remarks)
+            yield Row(
+                described, {"array": name}, {"array": place}, frozenset(), remarks
             )
 
 
-def _array(row: Row) -> Array:
+def _array(row: Row, *, hits: bool) -> Array:
     if "/" in row.text("array"):
         row.error(
             "id",
@@ -69,8 +74,8 @@ def _array(row: Row) -> Array:
         controller_ceiling=row.whole("controller ceiling"),
         uneven=row.whole("uneven"),
         write_answer=row.whole("write answer"),
-        read_hit_answer=row.whole("read hit answer"),
-        cache=row.whole("cache"),
+        read_hit_answer=row.whole("read hit answer", matters=hits),
+        cache=_cache(row, hits=hits),
         busy_measured=row.whole("controller busy measured"),
         one_copy=_one_copy(row, min(copies_in, copies_out), at_once),
         copies_in=copies_in,
@@ -83,17 +88,12 @@ def _array(row: Row) -> Array:
     )
 
 
-def assume_caches(
-    arrays: Iterable[Array], volumes: Iterable[Volume], remarks: Remarks
-) -> None:
-    """Say which caches are unknown, where the reads of any volume hit one."""
-    if not any(volume.read_hits for volume in volumes):
-        return
-    cache = sheet("arrays").column("cache")
-    for array in arrays:
-        if not array.cache:
-            row = Place("arrays", array.name)
-            remarks.default(cache, cache.default, row)
+def _cache(row: Row, *, hits: bool) -> int:
+    """Return the cache; one that is unknown matters only where reads hit any."""
+    cache = row.whole("cache")
+    if hits and not cache:
+        row.assume("cache")
+    return cache
 
 
 def _one_copy(row: Row, together: int, at_once: int) -> int:
@@ -119,6 +119,8 @@ def read_hosts(rows: Iterable[Row], arrays: Names, names: Names) -> tuple[Host, 
     """Return the hosts; the arrays they reach must be known."""
     hosts = []
     for row in rows:
+        if not row.given("arrays reached") and not row.faulty:
+            row.assume("arrays reached")
         reached = row.names("arrays reached")
         known = [n for n in reached if arrays.check(n, row.place("arrays reached"))]
         host = Host(name=row.text("host"), arrays=tuple(known), place=row.place("host"))

@@ -53,8 +53,10 @@ class Row:
         """Return whether the cell holds a value."""
         return column in self.values
 
-    def value(self, column: str, medium: str = "") -> Value | None:
-        """Return the cell's value, or its default, which is then an assumption."""
+    def value(
+        self, column: str, medium: str = "", *, matters: bool = True
+    ) -> Value | None:
+        """Return the cell's value, or its default: an assumption where it matters."""
         if column in self.values:
             return self.values[column]
         described = self.sheet.column(column)
@@ -63,16 +65,17 @@ class Row:
         if described.derived or not default:
             return None
         shown = _with_unit(default, described)
-        self._say_default(described, f"{medium} {shown}" if of_medium else shown)
+        if matters:
+            self._say_default(described, f"{medium} {shown}" if of_medium else shown)
         return read_cell(
             Cell(_as_typed(default, described), Place()),
             described,
             own_scale(described),
         )
 
-    def whole(self, column: str, medium: str = "") -> int:
+    def whole(self, column: str, medium: str = "", *, matters: bool = True) -> int:
         """Return a number as a whole count of the small unit; nothing is 0."""
-        found = self.value(column, medium)
+        found = self.value(column, medium, matters=matters)
         if not isinstance(found, Quantity):
             return 0
         side = self.sheet.column(column).side

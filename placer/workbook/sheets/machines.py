@@ -214,8 +214,12 @@ HOSTS = Sheet(
         Column(
             name="arrays reached",
             kind=Kind.LIST,
+            default="every array",
+            derived=True,
+            effect=Effect.REACH,
             synonyms=("arrays",),
-            meaning="arrays it reaches; blank: all",
+            meaning="arrays it reaches; where it names none it is taken to reach "
+            "every array",
         ),
     ),
 )

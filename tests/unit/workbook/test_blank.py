@@ -88,3 +88,9 @@ def test_columns_that_spreadsheets_would_change_are_formatted_as_text(
             d.number_format for d in spans if (d.min or 0) <= number <= (d.max or 0)
         ]
         assert formats == ["@"]
+
+
+def test_the_guide_says_what_a_host_without_arrays_reaches(path: Path) -> None:
+    page = load_workbook(path)["guide"]
+    said = {str(row[0].value): str(row[1].value) for row in page.iter_rows()}
+    assert "every array" in said["arrays reached"]

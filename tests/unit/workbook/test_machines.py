@@ -101,3 +101,33 @@ def test_what_an_array_answers_from_its_cache(tmp_path: Path) -> None:
 def test_a_cache_in_gb_is_asked(tmp_path: Path) -> None:
     sheets = with_sheet("arrays", ["array", "cache (GB)"], ["K", 256])
     assert only_error(intake(tmp_path, sheets)).code == "unit"
+
+
+def test_a_host_that_names_no_arrays_is_an_assumption(tmp_path: Path) -> None:
+    sheets = with_sheet(
+        "hosts", ["host", "arrays reached"], ["h1", "K"], ["h2", None], ["h3", None]
+    )
+    found = estate(tmp_path, sheets)
+    assert [host.arrays for host in found.hosts] == [("K",), (), ()]
+    said = [a for a in found.assumptions if a.column == "arrays reached"]
+    assert [(a.sheet, a.value, a.cells) for a in said] == [("hosts", "every array", 2)]
+    assert "arrays a volume may move to" in said[0].effect
+
+
+def test_what_a_read_hit_takes_is_assumed_only_where_reads_hit(tmp_path: Path) -> None:
+    def assumed(hits: object, *answers: list[object]) -> list[tuple[str, int]]:
+        sheets = with_sheet("arrays", ["array", "read hit answer (us)"], *answers)
+        sheets["volumes"][0].append("read hits (%)")
+        sheets["volumes"][1].append(hits)
+        found = estate(tmp_path, sheets)
+        assert found.arrays[1].read_hit_answer == 200
+        return [
+            (a.value, a.cells)
+            for a in found.assumptions
+            if a.column == "read hit answer"
+        ]
+
+    assert assumed(40, ["K", None]) == [("200 us", 2)]
+    assert assumed(40, ["K", 150]) == [("200 us", 1)]
+    assert assumed(0, ["K", None]) == []
+    assert assumed(None, ["K", 150]) == []
