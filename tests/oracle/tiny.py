@@ -101,6 +101,7 @@ def _flash(luck: random.Random) -> Pool:
         dwpd=luck.choice([0, 2_000, 30_000]),
         warranty_days=1825,
         life_days=1825,
+        one_drive_lost=luck.random() < 0.3,
         expansion=steps if luck.random() < 0.4 else None,
     )
 
@@ -118,6 +119,8 @@ def _spinning(luck: random.Random, array: str, name: str) -> Pool:
         rpm=luck.choice([7200, 10_000]),
         seek=luck.choice([4500, 8500]),
         measured_factor=luck.choice([1_000_000, 1_000_000, 1_300_000]),
+        busy_measured=luck.choice([0, 960_000]),
+        one_drive_lost=luck.random() < 0.3,
         drive_rate=150 * 10**6,
     )
 
@@ -175,4 +178,5 @@ def _policy(luck: random.Random) -> Policy:
         aim=luck.choice(list(Aim)),
         relief_given_up=luck.choice([0, 50_000]),
         nights_kept_free=0,
+        latent_demand=luck.choice([1_500_000, 2_000_000]),
     )

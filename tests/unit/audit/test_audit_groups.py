@@ -171,8 +171,10 @@ def test_flash_reads_and_writes_by_their_own_ratings() -> None:
         writes_at_most=500 * MILLI,
         drive_rate=100 * MB,
     )
-    busy = share(pool, 100 * MILLI, 10 * MILLI, MB, 2 * MB)
-    assert busy == Fraction(2, 10) + Fraction(625, 10_000) + Fraction(105, 1_000)
+    by_hand = Fraction(2, 10) + Fraction(625, 10_000) + Fraction(105, 1_000)
+    for random in (0, 400_000, PPM):
+        busy = share(pool, 100 * MILLI, 10 * MILLI, MB, 2 * MB, random=random)
+        assert busy == by_hand
 
 
 def test_a_black_box_counts_requests_whatever_its_drives_do() -> None:
