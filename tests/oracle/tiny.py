@@ -111,7 +111,7 @@ def _spinning(luck: random.Random, array: str, name: str) -> Pool:
         array=array,
         name=name,
         media=Media.SPINNING,
-        drives=luck.randint(16, 60),
+        drives=luck.choice([luck.randint(16, 60), luck.randint(5, 25)]),
         data=luck.choice([1, 4]),
         parity=1,
         usable=luck.randint(700, 2000) * GIB,
