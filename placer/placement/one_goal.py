@@ -14,7 +14,7 @@ from placer.placement.watch import Watch
 
 PROVEN = 1e-6
 ROUNDING = 1e-9
-CHAIN_SHARE = 0.3
+CHAIN_SHARE = 0.1
 
 
 @dataclass(frozen=True)

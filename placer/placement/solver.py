@@ -3,10 +3,16 @@
 The quirks of the interface are locked in here.  HiGHS through MathOpt refuses a thread
 count and cannot be interrupted, so calls are kept short by their callers.  Now and then
 it fails on a solution at the edge of its own tolerance; another solver then takes over.
+It also prints lines of its own, which must not reach standard output.
 """
 
+import os
+import sys
+from collections.abc import Iterator
+from contextlib import contextmanager
 from dataclasses import dataclass
 from datetime import timedelta
+from pathlib import Path
 
 import numpy as np
 from ortools.math_opt import model_pb2
@@ -89,12 +95,27 @@ def _solved(
     starts: mathopt.ModelSolveParameters,
 ) -> mathopt.SolveResult:
     try:
-        return mathopt.solve(model, solver, params=parameters, model_params=starts)
+        with _silenced():
+            return mathopt.solve(model, solver, params=parameters, model_params=starts)
     except AttributeError:
         # In this version of the library a failed status surfaces as this error.
         return mathopt.solve(
             model, SOLVERS["scip"], params=parameters, model_params=starts
         )
+
+
+@contextmanager
+def _silenced() -> Iterator[None]:
+    """Keep what a solver prints by itself out of standard output."""
+    sys.stdout.flush()
+    kept = os.dup(1)
+    try:
+        with Path(os.devnull).open("wb") as nowhere:
+            os.dup2(nowhere.fileno(), 1)
+        yield
+    finally:
+        os.dup2(kept, 1)
+        os.close(kept)
 
 
 def relax(program: Program, cost: Floats) -> Relaxed | None:
