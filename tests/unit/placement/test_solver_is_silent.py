@@ -1,9 +1,11 @@
 """Standard output belongs to the user: what solvers print by themselves stays out."""
 
 import os
+from typing import Any
 
 import numpy as np
 import pytest
+from ortools.math_opt.python import mathopt
 
 from placer.placement import solver
 from placer.placement.matrix import Builder, RowKey
@@ -12,13 +14,13 @@ from placer.placement.matrix import Builder, RowKey
 def test_nothing_a_solver_prints_reaches_standard_output(
     capfd: pytest.CaptureFixture[str], monkeypatch: pytest.MonkeyPatch
 ) -> None:
-    whole = solver.mathopt.solve
+    whole = mathopt.solve
 
-    def noisy(*arguments: object, **named: object) -> object:
+    def noisy(*arguments: Any, **named: Any) -> Any:
         os.write(1, b"noise of a solver\n")
-        return whole(*arguments, **named)  # type: ignore[arg-type]
+        return whole(*arguments, **named)
 
-    monkeypatch.setattr(solver.mathopt, "solve", noisy)
+    monkeypatch.setattr(mathopt, "solve", noisy)
     builder = Builder(2, 2)
     builder.at_most(RowKey("room"), [0, 1], np.array([2.0, 3.0]), 4)
     answer = solver.solve(builder.build(), np.array([-1.0, -2.0]), seconds=5)
