@@ -47,15 +47,18 @@ class Draw:
     profile: Floats
 
 
-def estate(volumes: int, pools: int, seed: int) -> Estate:
-    """Return an estate; the same arguments give the same estate."""
+def estate(volumes: int, pools: int, seed: int, spare: float = 0.05) -> Estate:
+    """Return an estate; the same arguments give the same estate.
+
+    Each limit is ``spare`` and up to 3 % more above the use of the hidden placement.
+    """
     rng = np.random.default_rng(seed)
     drawn = _draw(rng, volumes)
     hidden = _hidden(rng, drawn, pools)
     home = _scattered(rng, drawn, hidden, pools)
     open_pools = [_pool(p, pools) for p in range(pools)]
     made = _estate(seed, _volumes(drawn, home, open_pools), open_pools)
-    return replace(made, pools=_tight(rng, made, hidden))
+    return replace(made, pools=_tight(rng, made, hidden, spare))
 
 
 def _draw(rng: np.random.Generator, count: int) -> Draw:
@@ -164,13 +167,15 @@ def _pool(number: int, pools: int) -> Pool:
     )
 
 
-def _tight(rng: np.random.Generator, made: Estate, hidden: Ints) -> tuple[Pool, ...]:
-    """Close every limit to the hidden placement's use and 5 to 8 percent more."""
+def _tight(
+    rng: np.random.Generator, made: Estate, hidden: Ints, least: float
+) -> tuple[Pool, ...]:
+    """Close every limit to the hidden placement's use and a little more."""
     used = {block.code: block for block in limits(made, 0)}
     room = used["pool-room"].use(hidden)[:, 0]
     busy = used["pool-busy"].use(hidden).max(axis=1)
     wear = used["pool-wear"].use(hidden)[:, 0]
-    spare = rng.uniform(1.05, 1.08, size=(3, len(made.pools)))
+    spare = rng.uniform(1 + least, 1.03 + least, size=(3, len(made.pools)))
     return tuple(
         replace(
             pool,

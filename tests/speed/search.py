@@ -1,6 +1,7 @@
 """Measures the placement's search on tight estates: ``python tests/speed/search.py``.
 
-Arguments: volumes, pools, seconds, then seeds.  Prints the gap of each goal.
+Arguments: volumes, pools, seconds, share by which limits exceed the hidden placement's
+use, then seeds.  Prints the gap of each goal.
 """
 
 import sys
@@ -12,9 +13,10 @@ from placer.candidates.table import candidates
 from placer.placement.place import Placement, place
 
 
-def measure(volumes: int, pools: int, seconds: float, seed: int) -> str:
+def measure(size: tuple[int, int], seconds: float, spare: float, seed: int) -> str:
     """Return one line of the table."""
-    table = candidates(estate(volumes, pools, seed))
+    volumes, pools = size
+    table = candidates(estate(volumes, pools, seed, spare))
     begin = time.monotonic()
     found = place(table, seconds)
     took = time.monotonic() - begin
@@ -29,10 +31,11 @@ def measure(volumes: int, pools: int, seconds: float, seed: int) -> str:
 
 def main() -> None:
     """Print the table."""
-    volumes, pools, seconds = int(sys.argv[1]), int(sys.argv[2]), float(sys.argv[3])
+    size = int(sys.argv[1]), int(sys.argv[2])
+    seconds, spare = float(sys.argv[3]), float(sys.argv[4])
     print("volumes pools seed  relief [%] effort [%]  time [s]")  # noqa: T201
-    for seed in sys.argv[4:]:
-        print(measure(volumes, pools, seconds, int(seed)), flush=True)  # noqa: T201
+    for seed in sys.argv[5:]:
+        print(measure(size, seconds, spare, int(seed)), flush=True)  # noqa: T201
 
 
 if __name__ == "__main__":

@@ -35,7 +35,9 @@ def test_a_cutover_waits_for_load_to_leave_first() -> None:
 def test_load_that_never_leaves_is_named_with_its_pool() -> None:
     made = halls(volume("x", "a/one", 10, load(60)), volume("y", "a/two", 10, load(60)))
     case = booked(made, {"x": "a/two"})
-    assert case.left == {"x": "Drives kept busy in pool a/two at 00:00: 0.2 above the ceiling."}
+    assert case.left == {
+        "x": "Drives kept busy in pool a/two at 00:00: 0.2 above the ceiling."
+    }
 
 
 def test_the_hour_that_binds_is_named() -> None:
