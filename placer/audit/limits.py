@@ -92,8 +92,13 @@ class Scene:
         return swollen(asked, self.case.estate.policy.latent_demand)
 
 
-def room(scene: Scene, pool: Pool) -> Gauge:
-    """Room: what lands after reduction, with the snapshots beside it."""
+def room(scene: Scene, pool: Pool) -> Gauge | None:
+    """Room: what lands after reduction, with the snapshots beside it.
+
+    A pool that only gives and of which no room is known has no limit.
+    """
+    if not pool.takes_volumes and not machines.usable(pool, 0):
+        return None
     return Gauge(
         "pool-room",
         pool.id,
