@@ -80,7 +80,7 @@ def place(
     found = search(program, costs, seconds, start, watch, near_enough)
     if found.x is None:
         return _nothing(plan, seconds, timed_out=not found.impossible)
-    return _placement(plan, found)
+    return _placement(plan, found, costs)
 
 
 def _staying(plan: Layout) -> Floats | None:
@@ -92,17 +92,19 @@ def _staying(plan: Layout) -> Floats | None:
         return None
 
 
-def _placement(plan: Layout, found: Found) -> Placement:
+def _placement(plan: Layout, found: Found, costs: tuple[goals.Cost, ...]) -> Placement:
     assert found.x is not None
     bought = plan.bought(found.x)
     places = settle(found.program, plan, plan.places(found.x), bought)
     x = plan.solution(places, bought)
-    costs = {cost.name: cost for cost in goals.costs(plan)}
     return Placement(
         places=places,
         bought=bought,
         reasons=tuple(reasons(plan.candidates, places)),
-        goals=tuple(at_solution(costs[goal.name], goal, x) for goal in found.goals),
+        goals=tuple(
+            at_solution(cost, goal, x)
+            for cost, goal in zip(costs, found.goals, strict=True)
+        ),
     )
 
 

@@ -43,11 +43,11 @@ REMEDIES = {
 class Nearest:
     """The solution that overruns its limits least, and by how much each row.
 
-    ``short`` holds (row, share of the limit).
+    ``short`` holds (what the row stands for, share of the limit).
     """
 
     x: Floats
-    short: tuple[tuple[int, float], ...]
+    short: tuple[tuple[RowKey, float], ...]
 
 
 def homeless(candidates: Candidates) -> tuple[Shortage, ...]:
@@ -103,7 +103,9 @@ def nearest(layout: Layout, seconds: float) -> Nearest | None:
     if answer.x is None:
         return None
     over = answer.x[program.columns :]
-    short = [(int(soft[i]), float(over[i])) for i in np.flatnonzero(over > SMALLEST)]
+    short = [
+        (program.keys[soft[i]], float(over[i])) for i in np.flatnonzero(over > SMALLEST)
+    ]
     return Nearest(answer.x[: program.columns], tuple(short))
 
 
@@ -116,12 +118,11 @@ def _may_overrun(program: Program, row: int, key: RowKey) -> bool:
 
 def shortages(layout: Layout, found: Nearest) -> tuple[Shortage, ...]:
     """Word the overruns: for each limit and owner the hour that lacks most."""
-    keys = rows.program(layout).keys
-    worst: dict[tuple[str, str], tuple[int, float]] = {}
-    for row, share in sorted(found.short, key=lambda pair: (pair[1], -pair[0])):
-        worst[keys[row].code, keys[row].owner] = (keys[row].hour, share)
+    # Of hours that lack the same the first is named: it comes last and stays.
+    by_share = sorted(found.short, key=lambda pair: (pair[1], -pair[0].hour))
+    worst = {(key.code, key.owner): key.hour for key, _ in by_share}
     words = Words(layout, layout.places(found.x), layout.bought(found.x))
-    return tuple(words.say(*where, hour) for where, (hour, _) in sorted(worst.items()))
+    return tuple(words.say(*where, hour) for where, hour in sorted(worst.items()))
 
 
 class Words:
